@@ -1,0 +1,18 @@
+export { cutCount, glueEnds, jointCount, SAME_WITHIN_MM, strutLengths } from './frame';
+export type { Frame, Joint, Strut } from './frame';
+export { frameFigures } from './frame-figures';
+export type { FrameFigures, LengthClass } from './frame-figures';
+export { dihedralAngles } from './dihedral';
+export type { Dihedral } from './dihedral';
+export { FRAME_LIMITS, validateFrame } from './validate-frame';
+export type { FrameProblem, FrameProblemCode } from './validate-frame';
+export { SHAPE_LIMITS, shapeSchema } from './shape-schema';
+export type { Shape } from './shape-schema';
+export { buildShape } from './shapes';
+export { formatObj, OBJ_MOST_BYTES, parseObj } from './obj';
+export type { ObjNote, ObjProblem, ObjProblemCode, ObjReading } from './obj';
+export { flatDrawing, wireframeThumbnail } from './flat-drawing';
+export type { DrawnJoint, DrawnStrut, FlatDrawing, FlatDrawingOptions } from './flat-drawing';
+export type { Dimension } from './dimensions';
+export type { View, ViewTaken } from './projection';
+export { assemblyOrder } from './assembly-order';

@@ -1,0 +1,73 @@
+import type { Frame, Joint } from './frame';
+import type { Shape } from './shape-schema';
+import { frameOfFaces } from './stacked-rings';
+
+type VaultBay = Extract<Shape, { kind: 'vault-bay' }>;
+
+/** Places on the arc of a chord and a rise, evenly spaced by angle, from the left foot to the right one. */
+function arc(widthMm: number, riseMm: number, divisions: number): { x: number; z: number }[] {
+  // The radius of a chord w with rise h is (w²/4 + h²) / 2h; a flat bay has none.
+  const radius = riseMm === 0 ? 0 : (widthMm ** 2 / 4 + riseMm ** 2) / (2 * riseMm);
+  const half = riseMm === 0 ? 0 : 2 * Math.atan2(2 * riseMm, widthMm);
+  return Array.from({ length: divisions + 1 }, (_, at) => {
+    const share = (2 * at) / divisions - 1;
+    if (riseMm === 0) return { x: (share * widthMm) / 2, z: 0 };
+    const angle = share * half;
+    const foot = at === 0 || at === divisions;
+    return {
+      x: foot ? (share * widthMm) / 2 : radius * Math.sin(angle),
+      z: foot ? 0 : radius * (Math.cos(angle) - Math.cos(half)),
+    };
+  });
+}
+
+function squareBay(bay: VaultBay): Frame {
+  const { divisionsAlong: along, divisionsAcross: across, diagonals } = bay;
+  const joints: Joint[] = arc(bay.widthMm, bay.riseMm, across).flatMap(({ x, z }) =>
+    Array.from({ length: along + 1 }, (_, j) => ({ x, y: (j * bay.lengthMm) / along, z })),
+  );
+  const at = (i: number, j: number) => i * (along + 1) + j;
+  const faces: number[][] = [];
+  for (let i = 0; i < across; i++)
+    for (let j = 0; j < along; j++) {
+      const [a, b, c, d] = [at(i, j), at(i + 1, j), at(i + 1, j + 1), at(i, j + 1)];
+      if (diagonals === 'none') faces.push([a, b, c, d]);
+      else if (diagonals === 'one-way' || (i + j) % 2 === 0) faces.push([a, b, c], [a, c, d]);
+      else faces.push([a, b, d], [b, c, d]);
+    }
+  return frameOfFaces(joints, faces);
+}
+
+function staggeredBay(bay: VaultBay): Frame {
+  const { divisionsAlong: along, divisionsAcross: across } = bay;
+  const rows = arc(bay.widthMm, bay.riseMm, across);
+  const starts: number[] = [];
+  const joints: Joint[] = [];
+  rows.forEach(({ x, z }, i) => {
+    starts.push(joints.length);
+    const moved = i % 2 === 1;
+    for (let j = 0; j <= along - (moved ? 1 : 0); j++)
+      joints.push({ x, y: ((j + (moved ? 0.5 : 0)) * bay.lengthMm) / along, z });
+  });
+  const faces: number[][] = [];
+  for (let i = 0; i < across; i += 2) {
+    const [wide, narrow, next] = [starts[i]!, starts[i + 1]!, starts[i + 2]!];
+    faces.push([wide, next, narrow]);
+    for (let j = 0; j < along; j++) {
+      faces.push([wide + j, narrow + j, wide + j + 1], [next + j, next + j + 1, narrow + j]);
+      if (j + 1 < along)
+        faces.push([narrow + j, narrow + j + 1, wide + j + 1], [narrow + j, next + j + 1, narrow + j + 1]);
+    }
+    faces.push([wide + along, narrow + along - 1, next + along]);
+  }
+  return frameOfFaces(joints, faces);
+}
+
+/**
+ * One bay of a barrel vault as a lattice: arcs over the width, straight lines along the vault, and diagonals.
+ * @param bay measures in mm as `shapeSchema` allows them; staggered rows need an even number of divisions across
+ * @returns joints numbered row by row from the left foot (x = -width/2) to the right one, each row from y = 0 to the length; feet at
+ *   z = 0; faces anticlockwise from above
+ */
+export const buildVaultBay = (bay: VaultBay): Frame =>
+  bay.diagonals === 'staggered' ? staggeredBay(bay) : squareBay(bay);
