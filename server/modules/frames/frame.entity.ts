@@ -1,0 +1,18 @@
+import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import type { Frame as FrameGeometry, Shape } from '../../../shared/frames';
+
+/** One wireframe shape of an installation. */
+@Entity({ name: 'frame' })
+@Index(['installationId', 'revision'])
+export class Frame {
+  @PrimaryColumn({ type: 'text' }) id!: string;
+  @Column({ type: 'text', name: 'installation_id' }) installationId!: string;
+  @Column({ type: 'text' }) name!: string;
+  /** Where the geometry came from: a shape with its measures, or a file. */
+  @Column({ type: 'simple-json' }) source!:
+    { kind: 'shape'; shape: Shape } | { kind: 'obj'; fileName: string };
+  /** Joints in mm, struts and faces by joint index. */
+  @Column({ type: 'simple-json' }) geometry!: FrameGeometry;
+  @Column({ type: 'integer' }) revision!: number;
+  @Column({ type: 'integer', nullable: true, name: 'removed_at' }) removedAt!: number | null;
+}

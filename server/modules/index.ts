@@ -1,0 +1,35 @@
+import type { Deps } from '../deps';
+import type { AnyRoute } from '../http/route';
+import type { SessionLayer } from '../http/session';
+import type { AnyLiveSource } from '../realtime/live-source';
+import { accountsRoutes } from './accounts';
+import { cribLive, cribRoutes } from './crib';
+import { framesRoutes } from './frames';
+import { installationsLive, installationsRoutes } from './installations';
+import { mailRoutes } from './mail';
+import { peopleLive, peopleRoutes } from './people';
+import { progressRoutes } from './progress';
+import { safetyLive, safetyRoutes } from './safety';
+import { travellersLive, travellersRoutes } from './travellers';
+
+/** Every route of the server; the permission test walks this list. */
+export const allRoutes = (deps: Deps, layer: SessionLayer): AnyRoute[] => [
+  ...accountsRoutes(deps, layer),
+  ...installationsRoutes(deps, layer),
+  ...peopleRoutes(deps, layer),
+  ...safetyRoutes(deps),
+  ...framesRoutes(deps),
+  ...cribRoutes(deps),
+  ...travellersRoutes(deps),
+  ...progressRoutes(deps),
+  ...mailRoutes(deps),
+];
+
+/** Every live collection. */
+export const liveSources: readonly AnyLiveSource[] = [
+  ...installationsLive,
+  ...peopleLive,
+  ...safetyLive,
+  ...cribLive,
+  ...travellersLive,
+];

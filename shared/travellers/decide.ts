@@ -1,0 +1,380 @@
+import { ok, refuse, type Result } from '../kernel/result';
+import { clockGate } from './clocks';
+import { gatePerson, stopOver, type Refusal, type World } from './gates';
+import type { Step } from './step';
+
+export type { PersonFacts, Refusal, RefusalCode, World } from './gates';
+
+/** What somebody asks of a step. `happenedAt` (ms) is set when it was done before it reached the server. */
+export type Command =
+  | { type: 'claim'; happenedAt?: number | undefined }
+  | { type: 'give-back' }
+  | { type: 'offer'; to: string }
+  | { type: 'accept' }
+  | { type: 'withdraw' }
+  | { type: 'start' }
+  | { type: 'finish'; happenedAt?: number | undefined }
+  | { type: 'record'; crew: string[]; happenedAt: number }
+  | { type: 'end-drying'; reason: string }
+  | { type: 'clock-ended' }
+  | { type: 'still-wet'; seconds: number }
+  | { type: 'pass' }
+  | { type: 'rework'; reason: string; targetId: string }
+  | { type: 'hold'; reason: string }
+  | { type: 'release'; note: string };
+
+/** What an allowed command does: every step it changes, whole, and what goes into the day log. */
+export interface Transition {
+  steps: Step[];
+  event: string;
+  /** Rules that what already happened broke; it stands, but unlocks nothing by itself. */
+  flags: string[];
+  /** Advice that does not refuse, such as a second coat outside its window. */
+  warnings: { code: string; details: Record<string, unknown> }[];
+}
+
+type Decision = Result<Transition, Refusal>;
+
+/** An offline claim is worth nothing after two minutes: somebody else may stand at the bench. */
+export const OFFLINE_CLAIM_MS = 120_000;
+
+const no = (code: Refusal['code'], details: Record<string, unknown> = {}): Decision =>
+  refuse({ code, details });
+
+const done = (
+  steps: Step[],
+  event: string,
+  more: Partial<Pick<Transition, 'flags' | 'warnings'>> = {},
+): Decision => ok({ steps, event, flags: more.flags ?? [], warnings: more.warnings ?? [] });
+
+const holds = (step: Step, personId: string) => step.crew.some((member) => member.personId === personId);
+const withDoer = (step: Step, personId: string) =>
+  step.doers.includes(personId) ? step.doers : [...step.doers, personId];
+
+/**
+ * Decide one command on one step: the only place where a transition is allowed or refused. The server decides with
+ * it, the client greys out with it, the tests play it.
+ *
+ * @param world the step, its traveller in order, who asks, the stops that are raised, the settings and the time (ms)
+ * @param command what is asked
+ * @returns the changed steps and the event for the day log, or the refusal with the facts its words need
+ * @source the rules of the product, own
+ */
+export function decide(world: World, command: Command): Decision {
+  switch (command.type) {
+    case 'claim':
+      return claim(world, command.happenedAt);
+    case 'give-back':
+      return giveBack(world);
+    case 'offer':
+      return offer(world, command.to);
+    case 'accept':
+      return accept(world);
+    case 'withdraw':
+      return withdraw(world);
+    case 'start':
+      return start(world);
+    case 'finish':
+      return finish(world, command.happenedAt);
+    case 'record':
+      return record(world, command.crew, command.happenedAt);
+    case 'clock-ended':
+      return endDrying(world, 'step.dried');
+    case 'end-drying':
+      return endDrying(world, 'step.drying-ended-early');
+    case 'still-wet':
+      return stillWet(world, command.seconds);
+    case 'pass':
+      return pass(world);
+    case 'rework':
+      return rework(world, command.reason, command.targetId);
+    case 'hold':
+      return hold(world, command.reason);
+    case 'release':
+      return release(world);
+  }
+}
+
+/** Whether somebody could take a place now; the same answer a claim would get. */
+export const mayClaim = (world: World): Refusal | null => {
+  const decision = claim(world, undefined);
+  return decision.ok ? null : decision.refusal;
+};
+
+function claim(world: World, happenedAt: number | undefined): Decision {
+  const { step, person, now } = world;
+  if (happenedAt !== undefined && now - happenedAt > OFFLINE_CLAIM_MS) {
+    return no('OFFLINE_CLAIM_EXPIRED', { limitSeconds: OFFLINE_CLAIM_MS / 1000 });
+  }
+  const refusal = placeRefusal(world) ?? gatePerson(world, 'claim');
+  if (refusal) return refuse(refusal);
+  const crew = [...step.crew, { personId: person.id, claimedAt: now }];
+  return done([{ ...step, state: 'in hand', crew, doers: withDoer(step, person.id) }], 'step.claimed', {
+    warnings: clockGate(world.traveller, step, now).warnings,
+  });
+}
+
+/** Why the step has no place for this person, before anything about the person is asked. */
+function placeRefusal({ step, traveller, person, now }: World): Refusal | null {
+  if (holds(step, person.id)) return { code: 'STEP_ALREADY_YOURS', details: {} };
+  if (step.held) return { code: 'STEP_HELD', details: { ...step.held } };
+  if (step.state === 'waiting') {
+    const before = traveller.find((other) => other.position < step.position && other.state !== 'passed');
+    return {
+      code: 'STEP_NOT_READY',
+      details: { waitsFor: before?.id ?? null, waitsForName: before?.name ?? null },
+    };
+  }
+  if (step.state !== 'ready' && step.state !== 'rework' && step.state !== 'in hand') {
+    return { code: 'STEP_STATE', details: { state: step.state, dryUntil: step.dryUntil } };
+  }
+  if (step.crew.length >= step.crewMax) {
+    return {
+      code: 'STEP_CREW_FULL',
+      details: {
+        crew: step.crew.map((member) => member.personId),
+        places: step.crewMax,
+        claimedAt: step.crew.at(-1)?.claimedAt,
+      },
+    };
+  }
+  return clockGate(traveller, step, now).refusal;
+}
+
+/** Without crew a step lies open again, for what it was open for before. */
+function laidDown(step: Step): Step {
+  return {
+    ...step,
+    state: step.rework ? 'rework' : 'ready',
+    crew: [],
+    startedAt: null,
+    handOver: null,
+  };
+}
+
+function giveBack({ step, person }: World): Decision {
+  if (!holds(step, person.id)) return no('STEP_NOT_YOURS');
+  if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
+  const crew = step.crew.filter((member) => member.personId !== person.id);
+  const handOver = step.handOver?.from === person.id ? null : step.handOver;
+  return done([crew.length === 0 ? laidDown(step) : { ...step, crew, handOver }], 'step.given-back');
+}
+
+function offer({ step, person, now }: World, to: string): Decision {
+  if (!holds(step, person.id)) return no('STEP_NOT_YOURS');
+  if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
+  if (step.held) return no('STEP_HELD', { ...step.held });
+  if (to === person.id || holds(step, to)) return no('HAND_OVER_TO_SELF', { to });
+  return done([{ ...step, handOver: { from: person.id, to, at: now } }], 'step.offered');
+}
+
+function accept(world: World): Decision {
+  const { step, person, now } = world;
+  const offered = step.handOver;
+  if (offered?.to !== person.id) return no('HAND_OVER_NOT_OFFERED');
+  if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
+  if (step.held) return no('STEP_HELD', { ...step.held });
+  const refusal = gatePerson(world, 'claim');
+  if (refusal) return refuse(refusal);
+  const crew = step.crew.map((member) =>
+    member.personId === offered.from ? { personId: person.id, claimedAt: now } : member,
+  );
+  return done([{ ...step, crew, doers: withDoer(step, person.id), handOver: null }], 'step.handed-over');
+}
+
+function withdraw({ step, person }: World): Decision {
+  const offered = step.handOver;
+  if (!offered || (offered.from !== person.id && offered.to !== person.id))
+    return no('HAND_OVER_NOT_OFFERED');
+  return done(
+    [{ ...step, handOver: null }],
+    offered.to === person.id ? 'step.offer-declined' : 'step.offer-withdrawn',
+  );
+}
+
+function start(world: World): Decision {
+  const { step, person, now } = world;
+  if (!holds(step, person.id)) return no('STEP_NOT_YOURS');
+  if (step.state !== 'in hand' || step.startedAt !== null)
+    return no('STEP_STATE', { state: step.state, startedAt: step.startedAt });
+  if (step.held) return no('STEP_HELD', { ...step.held });
+  if (step.crew.length < step.crewMin) {
+    return no('STEP_CREW_TOO_SMALL', { crew: step.crew.length, needed: step.crewMin });
+  }
+  const refusal = gatePerson(world, 'start');
+  if (refusal) return refuse(refusal);
+  return done([{ ...step, startedAt: now }], 'step.started');
+}
+
+function finish(world: World, happenedAt: number | undefined): Decision {
+  const { step, person, now } = world;
+  if (!holds(step, person.id)) return no('STEP_NOT_YOURS', { state: step.state });
+  if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
+  const broken = finishRefusal(world);
+  if (happenedAt === undefined)
+    return broken ? refuse(broken) : done(finished(world, now, []), 'step.finished');
+  // It was done before the server heard of it: never refused, but flagged, and then it waits for a lead.
+  const flags = broken ? [broken.code] : [];
+  return done(finished(world, Math.min(happenedAt, now), flags), 'step.finished', { flags });
+}
+
+function finishRefusal(world: World): Refusal | null {
+  const { step } = world;
+  if (step.held) return { code: 'STEP_HELD', details: { ...step.held } };
+  if (step.startedAt === null) return { code: 'STEP_NOT_STARTED', details: {} };
+  return stopOver(world);
+}
+
+/** The finished step and, when it passes at once, the next one it opens. */
+function finished({ step, traveller, person }: World, at: number, flags: string[]): Step[] {
+  const base: Step = {
+    ...step,
+    crew: [],
+    handOver: null,
+    startedAt: step.startedAt ?? at,
+    finishedAt: at,
+    finishedBy: person.id,
+    rework: null,
+    flags: [...step.flags, ...flags],
+  };
+  if (base.flags.length > 0) return [{ ...base, state: 'to check', dryUntil: null }];
+  if (step.clocks) return [{ ...base, state: 'drying', dryUntil: at + step.clocks.touchDry * 1000 }];
+  if (step.needsCheck) return [{ ...base, state: 'to check', dryUntil: null }];
+  return passed(base, traveller, at, null);
+}
+
+/** Pass a step and make the next one ready. */
+function passed(step: Step, traveller: readonly Step[], at: number, by: string | null): Step[] {
+  const next = traveller.find((other) => other.position > step.position);
+  const changed: Step[] = [{ ...step, state: 'passed', dryUntil: null, passedAt: at, passedBy: by }];
+  if (next?.state === 'waiting') changed.push({ ...next, state: 'ready' });
+  return changed;
+}
+
+function record({ step, person, now }: World, crew: string[], happenedAt: number): Decision {
+  if (step.state === 'passed') return no('STEP_STATE', { state: step.state });
+  const flags = [...new Set([...step.flags, 'RECORDED_FROM_PAPER'])];
+  if (step.held) flags.push('STEP_HELD');
+  if (step.state === 'waiting') flags.push('STEP_NOT_READY');
+  const doers = [...new Set([...step.doers, ...crew])];
+  const at = Math.min(happenedAt, now);
+  return done(
+    [
+      {
+        ...step,
+        state: 'to check',
+        crew: [],
+        handOver: null,
+        doers,
+        startedAt: step.startedAt ?? at,
+        finishedAt: at,
+        finishedBy: crew[0] ?? person.id,
+        dryUntil: null,
+        rework: null,
+        flags,
+      },
+    ],
+    'step.recorded',
+    { flags },
+  );
+}
+
+function endDrying({ step, traveller, now }: World, event: string): Decision {
+  if (step.state !== 'drying') return no('STEP_STATE', { state: step.state });
+  // A hold stops the step, its paint dries all the same: it goes on to its check and no further.
+  if (step.needsCheck || step.held) return done([{ ...step, state: 'to check', dryUntil: null }], event);
+  return done(passed(step, traveller, now, null), event);
+}
+
+function stillWet({ step, traveller, station, now }: World, seconds: number): Decision {
+  const later = traveller.filter((other) => other.position > step.position);
+  const dried =
+    step.clocks !== null && step.finishedAt !== null && step.state !== 'in hand' && step.state !== 'rework';
+  if (!dried || later.some((other) => other.state !== 'waiting' && other.state !== 'ready')) {
+    return no('STEP_STATE', { state: step.state });
+  }
+  const longer = (wet: Step): Step => ({
+    ...wet,
+    state: 'drying',
+    passedAt: null,
+    passedBy: null,
+    dryUntil: Math.max(wet.dryUntil ?? now, now) + seconds * 1000,
+  });
+  // The bay is as cold and damp for its other pieces: their clocks run longer too.
+  const others = station.filter((other) => other.id !== step.id && other.state === 'drying').map(longer);
+  const closed = later
+    .filter((other) => other.state === 'ready')
+    .map((other): Step => ({ ...other, state: 'waiting' }));
+  return done([longer(step), ...others, ...closed], 'step.still-wet');
+}
+
+function checkRefusal({ step, person }: World): Refusal | null {
+  if (!person.confirmed) return { code: 'PERSON_NOT_CONFIRMED', details: {} };
+  if (!person.duties.includes('bench lead') && !person.duties.includes('checker')) {
+    return { code: 'CHECKER_NEEDED', details: {} };
+  }
+  if (step.doers.includes(person.id)) return { code: 'CHECKER_DID_WORK', details: { doers: step.doers } };
+  return null;
+}
+
+function pass(world: World): Decision {
+  const { step, traveller, person, now } = world;
+  if (step.state !== 'to check') return no('STEP_STATE', { state: step.state });
+  if (step.held) return no('STEP_HELD', { ...step.held });
+  const refusal = checkRefusal(world);
+  if (refusal) return refuse(refusal);
+  const before = traveller.find((other) => other.position < step.position && other.state !== 'passed');
+  if (before) return no('STEP_NOT_READY', { waitsFor: before.id, waitsForName: before.name });
+  // Looking at it is what clears its flags: the entry stays in the day log.
+  return done(passed({ ...step, flags: [] }, traveller, now, person.id), 'step.passed');
+}
+
+function rework(world: World, reason: string, targetId: string): Decision {
+  const { step, traveller, person, now } = world;
+  if (step.state !== 'to check') return no('STEP_STATE', { state: step.state });
+  const refusal = checkRefusal(world);
+  if (refusal) return refuse(refusal);
+  const target = traveller.find((other) => other.id === targetId);
+  if (!target || target.position > step.position) return no('REWORK_TARGET', { targetId });
+  const reopened: Step = {
+    ...target,
+    state: 'rework',
+    rework: { reason, by: person.id, at: now },
+    crew: [],
+    handOver: null,
+    startedAt: null,
+    finishedAt: null,
+    finishedBy: null,
+    dryUntil: null,
+    passedAt: null,
+    passedBy: null,
+    flags: [],
+  };
+  const later = traveller
+    .filter((other) => other.position > target.position && other.state !== 'waiting')
+    .map((other): Step => ({
+      ...other,
+      state: 'waiting',
+      crew: [],
+      handOver: null,
+      startedAt: null,
+      finishedAt: null,
+      finishedBy: null,
+      dryUntil: null,
+      passedAt: null,
+      passedBy: null,
+      flags: [],
+    }));
+  return done([reopened, ...later], 'step.sent-to-rework');
+}
+
+function hold({ step, person, now }: World, reason: string): Decision {
+  if (step.held) return no('STEP_HELD', { ...step.held });
+  if (step.state === 'passed') return no('STEP_STATE', { state: step.state });
+  return done([{ ...step, held: { reason, by: person.id, at: now } }], 'step.held');
+}
+
+function release({ step }: World): Decision {
+  if (!step.held) return no('STEP_NOT_HELD');
+  return done([{ ...step, held: null }], 'step.released');
+}

@@ -1,0 +1,5 @@
+export * from './bench';
+export * from './clocks';
+export * from './decide';
+export * from './minutes';
+export * from './step';
