@@ -161,7 +161,8 @@ export function flatDrawing(frame: Frame, options: FlatDrawingOptions): FlatDraw
   const placed = frame.joints.length <= MOST_PLACED;
   if (placed) {
     for (const line of bare) page.addLine(line);
-    for (const { line } of dimensions) page.addLine(line);
+    for (const { line, extensions } of dimensions)
+      for (const part of [line, ...extensions]) page.addLine(part);
     for (const { x, y } of places)
       page.addBox({ left: x - JOINT_PX, top: y - JOINT_PX, right: x + JOINT_PX, bottom: y + JOINT_PX });
   }

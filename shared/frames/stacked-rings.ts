@@ -1,10 +1,13 @@
 import { edgeKey, ringEdges } from './edge-key';
 import type { Frame, Joint, Strut } from './frame';
 
-/** A ring of joints round the z axis, anticlockwise from above. */
+/**
+ * A ring of joints round the z axis, anticlockwise from above. Its first side faces the front (-y), so that a cube lies along the axes;
+ * `halfSteps` turns it on by halves of a side.
+ */
 export function ringJoints(sides: number, radius: number, z: number, halfSteps: number): Joint[] {
   return Array.from({ length: sides }, (_, at) => {
-    const angle = ((2 * at + halfSteps) * Math.PI) / sides;
+    const angle = ((2 * at - 1 + halfSteps) * Math.PI) / sides - Math.PI / 2;
     return { x: radius * Math.cos(angle), y: radius * Math.sin(angle), z };
   });
 }

@@ -4,19 +4,22 @@ import { frameOfFaces } from './stacked-rings';
 
 type VaultBay = Extract<Shape, { kind: 'vault-bay' }>;
 
+/** Half the angle of an arc below which it is straight: on the widest bay a rise of 0.005 mm. */
+const STRAIGHT = 1e-6;
+
 /** Places on the arc of a chord and a rise, evenly spaced by angle, from the left foot to the right one. */
 function arc(widthMm: number, riseMm: number, divisions: number): { x: number; z: number }[] {
-  // The radius of a chord w with rise h is (w²/4 + h²) / 2h; a flat bay has none.
-  const radius = riseMm === 0 ? 0 : (widthMm ** 2 / 4 + riseMm ** 2) / (2 * riseMm);
-  const half = riseMm === 0 ? 0 : 2 * Math.atan2(2 * riseMm, widthMm);
+  const half = 2 * Math.atan2(2 * riseMm, widthMm);
   return Array.from({ length: divisions + 1 }, (_, at) => {
     const share = (2 * at) / divisions - 1;
-    if (riseMm === 0) return { x: (share * widthMm) / 2, z: 0 };
-    const angle = share * half;
     const foot = at === 0 || at === divisions;
+    if (foot || half < STRAIGHT) return { x: (share * widthMm) / 2, z: 0 };
+    // r (cos a - cos half) as a product: the radius of a flat arc is so large that the difference would lose all digits.
+    const angle = share * half;
+    const [left, right] = [Math.sin((half + angle) / 2), Math.sin((half - angle) / 2)];
     return {
-      x: foot ? (share * widthMm) / 2 : radius * Math.sin(angle),
-      z: foot ? 0 : radius * (Math.cos(angle) - Math.cos(half)),
+      x: (widthMm / 2) * (Math.sin(angle) / Math.sin(half)),
+      z: widthMm * (left / Math.sin(half)) * right,
     };
   });
 }
