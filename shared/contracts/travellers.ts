@@ -110,15 +110,3 @@ export const recordSchema = z.strictObject({
     .min(0)
     .max(24 * 60),
 });
-
-export interface DayLogView {
-  seq: number;
-  revision: number;
-  happenedAt: number;
-  recordedAt: number;
-  actor: string;
-  forPersonId: string | null;
-  action: string;
-  subject: Record<string, unknown>;
-  flags: string[];
-}

@@ -53,7 +53,7 @@ export interface World {
 /** The stop, if any, that covers the step. */
 export function stopOver({ step, stops }: Pick<World, 'step' | 'stops'>): Refusal | null {
   const stop = stops.find((raised) =>
-    stopCovers(raised, { stationId: step.stationId, hazards: step.hazards }),
+    stopCovers(raised, { stationId: step.stationId, hazards: step.hazards, toolKinds: step.toolKinds }),
   );
   return stop ? { code: 'STOP_ACTIVE', details: { ...stop } } : null;
 }
@@ -69,21 +69,29 @@ export function gatePerson(world: World, purpose: 'claim' | 'start'): Refusal | 
   if (!person.confirmed) return { code: 'PERSON_NOT_CONFIRMED', details: {} };
   const stop = stopOver(world);
   if (stop) return stop;
-  for (const hazard of step.hazards) {
-    const verdict = ageVerdict(settings.ageRules, person.ageBand, { hazard });
-    if (verdict.verdict === 'refused') {
-      return {
-        code: 'AGE_RULE',
-        details: { hazard, ageBand: person.ageBand, rule: verdict.rule, source: verdict.source },
-      };
-    }
-  }
+  const age = ageRefusal(world);
+  if (age) return age;
   for (const hazard of step.hazards) {
     const missing = person.missing[hazard];
     if (missing !== undefined) return { code: 'SIGN_OFF_MISSING', details: { hazard, missing } };
   }
   if (purpose === 'claim' && person.inHand >= settings.maxInHand) {
     return { code: 'IN_HAND_LIMIT', details: { limit: settings.maxInHand } };
+  }
+  return null;
+}
+
+/** The age rule, if any, that keeps this person off the step; asked once more where the step lists tools but no hazard. */
+function ageRefusal({ step, person, settings }: World): Refusal | null {
+  const questions = step.hazards.length > 0 ? step.hazards : [null];
+  for (const hazard of questions) {
+    const verdict = ageVerdict(settings.ageRules, person.ageBand, { hazard, toolKinds: step.toolKinds });
+    if (verdict.verdict !== 'refused') continue;
+    const { rule, source, from, heightMm, alternatives, message } = verdict;
+    return {
+      code: 'AGE_RULE',
+      details: { hazard, ageBand: person.ageBand, rule, source, from, heightMm, alternatives, message },
+    };
   }
   return null;
 }

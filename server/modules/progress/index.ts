@@ -1,4 +1,1 @@
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-
-export const progressRoutes = (_deps: Deps): AnyRoute[] => [];
+export { progressRoutes } from './progress.routes';
