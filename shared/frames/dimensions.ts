@@ -32,10 +32,8 @@ function dimension(kind: Dimension['kind'], mm: number, a: Point, b: Point, off:
     const end = at(p, 1 + GAP_PX / reach);
     return { x1: start.x, y1: start.y, x2: end.x, y2: end.y };
   };
-  let angle = (Math.atan2(to.y - from.y, to.x - from.x) * 180) / Math.PI;
-  // Figures are read from below or from the right, never upside down.
-  if (angle >= 90 - 1e-9) angle -= 180;
-  if (angle < -90 - 1e-9) angle += 180;
+  // Every dimension runs to the right or up, so that its figure is read from below or from the right.
+  const angle = (Math.atan2(to.y - from.y, to.x - from.x) * 180) / Math.PI;
   return {
     kind,
     mm,

@@ -9,7 +9,8 @@ export type ObjStatement = { keyword: string; line: number; words: ObjWord[]; op
  * @param text the file; lines may end in LF, CR or CRLF
  */
 export function* objStatements(text: string): Generator<ObjStatement> {
-  const lines = text.replace(/^\uFEFF/, '').split(/\r\n|\n|\r/);
+  const lines = text.split(/\r\n|\n|\r/);
+  // A byte order mark needs no care: it counts as white space.
   let words: ObjWord[] = [];
   const statement = (openEnd: boolean): ObjStatement => {
     const [keyword, ...rest] = words;

@@ -19,6 +19,13 @@ describe('assemblyOrder', () => {
     expect(raised.every((strut) => strut.includes(3))).toBe(true);
   });
 
+  it('prism of six sides > ordered > after base and first wall the wall next to it, which needs two struts', () => {
+    const frame = buildShape({ kind: 'prism', sides: 6, baseBy: 'edge', baseMm: 100, heightMm: 300 });
+    const order = assemblyOrder(frame).map((strut) => frame.struts[strut]!);
+    const reached = (count: number) => new Set(order.slice(0, count).flat()).size;
+    expect([6, 9, 11, 13].map(reached)).toEqual([6, 8, 9, 10]);
+  });
+
   it('frame without faces > ordered > closes a ring before it reaches out', () => {
     const frame: Frame = {
       joints: Array.from({ length: 4 }, (_, at) => ({ x: at * 50, y: (at % 2) * 50, z: 0 })),

@@ -18,6 +18,46 @@ const bay: Shape = {
 const nearest = (points: { x: number; y: number }[]): number =>
   Math.min(...points.flatMap((a, at) => points.slice(at + 1).map((b) => Math.hypot(a.x - b.x, a.y - b.y))));
 
+const fromLine = (
+  point: { x: number; y: number },
+  { x1, y1, x2, y2 }: { x1: number; y1: number; x2: number; y2: number },
+): number => {
+  const along = ((point.x - x1) * (x2 - x1) + (point.y - y1) * (y2 - y1)) / ((x2 - x1) ** 2 + (y2 - y1) ** 2);
+  const share = Math.min(1, Math.max(0, along));
+  return Math.hypot(point.x - x1 - share * (x2 - x1), point.y - y1 - share * (y2 - y1));
+};
+
+/** A tetrahedron with a fifth joint on a strut of its own. */
+const spread: Frame = {
+  joints: [
+    { x: 0, y: 0, z: 0 },
+    { x: 300, y: 20, z: 0 },
+    { x: 120, y: 330, z: 40 },
+    { x: 90, y: 110, z: 280 },
+    { x: 0, y: 0, z: -100 },
+  ],
+  struts: [
+    [0, 1],
+    [1, 2],
+    [2, 0],
+    [0, 3],
+    [1, 3],
+    [2, 3],
+    [3, 4],
+  ],
+  faces: [],
+};
+
+/** A place that the usual turned view (28 degrees to the right, 22 up) shows at the same point of the page, 150 mm nearer. */
+const awayFrom = (x: number, y: number, z: number) => {
+  const [right, up] = [(28 * Math.PI) / 180, (22 * Math.PI) / 180];
+  return {
+    x: x + 150 * Math.sin(right) * Math.cos(up),
+    y: y - 150 * Math.cos(right) * Math.cos(up),
+    z: z + 150 * Math.sin(up),
+  };
+};
+
 describe('flatDrawing', () => {
   it('front view > prism 200 wide and 500 high > true to scale, dimensions 200 and 500 mm', () => {
     const drawing = flatDrawing(box, { ...page, view: 'front' });
@@ -86,6 +126,39 @@ describe('flatDrawing', () => {
         expect(label.y).toBeLessThan(page.height);
       }
     });
+
+  it('auto > joints one behind the other in the usual view > another view is taken, in which they stand apart', () => {
+    const behind = awayFrom(0, 0, 0);
+    const frame: Frame = { ...spread, joints: [...spread.joints.slice(0, 4), behind] };
+    expect(nearest(flatDrawing(frame, page).points)).toBeGreaterThan(5);
+  });
+
+  it('auto > joint in front of a strut that is not its own in the usual view > another view is taken', () => {
+    const [a, b] = [spread.joints[1]!, spread.joints[2]!];
+    const infront = awayFrom((a.x + b.x) / 2, (a.y + b.y) / 2, (a.z + b.z) / 2);
+    const { points, lines } = flatDrawing(
+      { ...spread, joints: [...spread.joints.slice(0, 4), infront] },
+      page,
+    );
+    const line = lines.find(({ from, to }) => from === 2 && to === 3)!;
+    expect(fromLine(points[4]!, line)).toBeGreaterThan(4);
+  });
+
+  it('numbers of joints > dodecahedron > none over a strut', () => {
+    const { points, lines } = flatDrawing(buildShape({ kind: 'dodecahedron', edgeMm: 200 }), page);
+    for (const { label } of points)
+      for (const line of lines) expect(fromLine(label, line)).toBeGreaterThan(5.9);
+  });
+
+  it('dimensions > every view of the bay > on the page, running right or up', () => {
+    for (const view of ['auto', 'isometric', 'front', 'side', 'top'] as const)
+      for (const { line, label } of flatDrawing(buildShape(bay), { ...page, view }).dimensions) {
+        for (const x of [line.x1, line.x2]) expect(Math.abs(x - page.width / 2)).toBeLessThan(page.width / 2);
+        for (const y of [line.y1, line.y2])
+          expect(Math.abs(y - page.height / 2)).toBeLessThan(page.height / 2);
+        expect(Math.abs(label.angle)).toBeLessThan(90.001);
+      }
+  });
 
   it('auto > planar frame standing askew > looks square onto it, lengths true', () => {
     const flat = buildShape({ ...bay, riseMm: 0 });

@@ -119,6 +119,21 @@ describe('dihedralAngles', () => {
     ]);
   });
 
+  it('open vault bay wound downwards > measured > the same angle, as nothing closes it', () => {
+    const shape = {
+      kind: 'vault-bay',
+      lengthMm: 900,
+      widthMm: 900,
+      riseMm: 300,
+      divisionsAlong: 1,
+      divisionsAcross: 2,
+      diagonals: 'none',
+    } as const;
+    const up = buildShape(shape);
+    const down = { ...up, faces: up.faces.map((face) => [...face].reverse()) };
+    expect(dihedralAngles(down)[0]!.degrees).toBeCloseTo(dihedralAngles(up)[0]!.degrees, 9);
+  });
+
   it('edge of three faces > measured > left out, no pair of them is the shape', () => {
     const fan: Frame = {
       joints: [...square.joints, { x: 50, y: 50, z: 100 }],
@@ -195,6 +210,30 @@ describe('validateFrame', () => {
       'FRAME_LOOSE_JOINT 6',
     ]);
   });
+
+  it.each(['x', 'y', 'z'] as const)(
+    'joints 0.05 mm apart along %s > either order > at the same place',
+    (axis) => {
+      // 99.97 and 100.02 lie on two sides of a whole tenth.
+      for (const [one, two] of [
+        [99.97, 100.02],
+        [100.02, 99.97],
+      ] as const) {
+        const origin = { x: 0, y: 0, z: 0 };
+        const frame: Frame = {
+          joints: [origin, { ...origin, [axis]: one }, { ...origin, [axis]: two }],
+          struts: [
+            [0, 1],
+            [0, 2],
+          ],
+          faces: [],
+        };
+        expect(validateFrame(frame).map(({ code, joint }) => [code, joint])).toEqual([
+          ['FRAME_SAME_PLACE', 3],
+        ]);
+      }
+    },
+  );
 
   it('doubled strut > looked at > names both struts and both joints', () => {
     const [problem] = validateFrame({ ...square, struts: [...square.struts, [2, 1]] });

@@ -180,6 +180,12 @@ describe('parseObj of a bad file', () => {
       'line 6',
     ],
     [
+      'strut twice besides a face along it',
+      `${SQUARE}f 1 2 3\nl 1 2\nl 2 1`,
+      { code: 'OBJ_DOUBLED_STRUT', line: 7, otherLine: 6 },
+      'already on line 6',
+    ],
+    [
       'strut there and back in one line',
       `${SQUARE}l 1 2 1`,
       { code: 'OBJ_DOUBLED_STRUT', line: 5, otherLine: 5 },

@@ -52,6 +52,13 @@ describe('buildShape', () => {
     for (const measure of [x, y, z]) expect(measure).toBeCloseTo(300, 9);
   });
 
+  it('any base > five sides > its first side faces the front', () => {
+    const { joints } = buildShape({ kind: 'prism', sides: 5, ...base, heightMm: 300 });
+    const front = Math.min(...joints.map(({ y }) => y));
+    expect([joints[0]!.y, joints[1]!.y]).toEqual([expect.closeTo(front, 9), expect.closeTo(front, 9)]);
+    expect(joints[0]!.x).toBeLessThan(joints[1]!.x);
+  });
+
   it('prism > base by its edge of 150 mm, height 400 mm > two length classes, 150 and 400', () => {
     const frame = buildShape({ kind: 'prism', sides: 6, baseBy: 'edge', baseMm: 150, heightMm: 400 });
     const classes = frameFigures(frame).lengthClasses.map(({ lengthMm, count }) => [
@@ -98,6 +105,17 @@ const bay = {
   diagonals: 'staggered',
 } as const;
 
+/** No edge walked twice the same way, and every face anticlockwise seen from above or from the side it bulges to. */
+function woundUpwards({ joints, faces }: Frame): boolean {
+  const walked = faces.flatMap((face) => face.map((joint, at) => `${joint}>${face[(at + 1) % face.length]}`));
+  const area = (face: number[]) =>
+    face.reduce((sum, joint, at) => {
+      const [a, b] = [joints[joint]!, joints[face[(at + 1) % face.length]!]!];
+      return sum + a.x * b.y - b.x * a.y;
+    }, 0);
+  return new Set(walked).size === walked.length && faces.every((face) => area(face) > 0);
+}
+
 describe('buildShape of a vault bay', () => {
   for (const diagonals of ['none', 'one-way', 'alternating', 'staggered'] as const)
     for (const riseMm of [0, 1e-200, 1, 400, 1350])
@@ -109,6 +127,7 @@ describe('buildShape of a vault bay', () => {
         expect(boxMm.x).toBeCloseTo(2700, 6);
         expect(boxMm.y).toBeCloseTo(1000, 6);
         expect(boxMm.z).toBeCloseTo(riseMm, 6);
+        expect(woundUpwards(frame)).toBe(true);
       });
 
   it('staggered > 2 along and 4 across > 13 joints, rows of 3, 2, 3, 2, 3', () => {
@@ -117,6 +136,15 @@ describe('buildShape of a vault bay', () => {
     for (const { x } of frame.joints) rows.set(Math.round(x), (rows.get(Math.round(x)) ?? 0) + 1);
     expect([...rows.values()]).toEqual([3, 2, 3, 2, 3]);
     expect(frame.struts).toHaveLength(28);
+  });
+
+  it.each([
+    ['none', 4],
+    ['one-way', 6],
+    ['alternating', 8],
+  ] as const)('%s diagonals > 2 by 2 fields > %i struts meet in the middle', (diagonals, expected) => {
+    const frame = buildShape({ ...bay, divisionsAcross: 2, diagonals });
+    expect(frame.struts.filter((strut) => strut.includes(4))).toHaveLength(expected);
   });
 
   it('arc > rise 400 on a chord of 2,700 mm > every joint as far from the axis as the circle through them', () => {
