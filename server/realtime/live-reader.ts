@@ -70,7 +70,14 @@ export class LiveReader {
       const whole = this.load(installationId, LIVE_KINDS, { since });
       const count = Object.values(whole).reduce((sum, records) => sum + records.length, 0);
       if (count > RESET_ABOVE) return { reset: true, snapshot: this.snapshot(installationId, viewer) };
-      return { reset: false, from: since, to, changed: this.seenBy(whole, viewer), now: this.clock.now() };
+      return {
+        reset: false,
+        from: since,
+        to,
+        changed: this.seenBy(whole, viewer),
+        now: this.clock.now(),
+        clockRate: this.clock.rate,
+      };
     })();
   }
 

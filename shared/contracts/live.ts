@@ -222,7 +222,8 @@ export interface Snapshot {
 
 /** Reply to `GET /changes?since=`. */
 export type CatchUp =
-  ({ reset: false } & RangeMessage & { now: number }) | { reset: true; snapshot: Snapshot };
+  | ({ reset: false } & RangeMessage & { now: number; clockRate: number })
+  | { reset: true; snapshot: Snapshot };
 
 /** Sent every few seconds: the link lives, and what time and revision it is. */
 export interface Beat {

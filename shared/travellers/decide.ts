@@ -1,6 +1,7 @@
 import { ok, refuse, type Result } from '../kernel/result';
 import { clockGate } from './clocks';
 import { gatePerson, stopOver, type Refusal, type World } from './gates';
+import { OFFLINE_CLAIM_MS } from './limits';
 import type { Step } from './step';
 
 export type { PersonFacts, Refusal, RefusalCode, World } from './gates';
@@ -34,9 +35,6 @@ export interface Transition {
 }
 
 type Decision = Result<Transition, Refusal>;
-
-/** An offline claim is worth nothing after two minutes: somebody else may stand at the bench. */
-export const OFFLINE_CLAIM_MS = 120_000;
 
 const no = (code: Refusal['code'], details: Record<string, unknown> = {}): Decision =>
   refuse({ code, details });

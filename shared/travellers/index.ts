@@ -1,5 +1,6 @@
 export * from './bench';
 export * from './clocks';
 export * from './decide';
+export * from './limits';
 export * from './minutes';
 export * from './step';

@@ -1,0 +1,2 @@
+/** Where the session view stands in the query cache. */
+export const SESSION_KEY = ['session'] as const;
