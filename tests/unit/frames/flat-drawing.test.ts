@@ -160,6 +160,13 @@ describe('flatDrawing', () => {
       }
   });
 
+  it('dimensions > ring as wide as the page > along its box, which reaches past the joints, yet on the page', () => {
+    const ring = buildShape({ kind: 'antiprism', sides: 8, baseBy: 'edge', baseMm: 200, uniform: true });
+    const { dimensions } = flatDrawing(ring, { width: 300, height: 600, view: 'isometric' });
+    for (const { line } of dimensions)
+      for (const x of [line.x1, line.x2]) expect(Math.abs(x - 150)).toBeLessThan(130);
+  });
+
   it('auto > planar frame standing askew > looks square onto it, lengths true', () => {
     const flat = buildShape({ ...bay, riseMm: 0 });
     const [turn, tilt] = [0.7, 1.1];

@@ -159,6 +159,9 @@ describe('buildShape of a vault bay', () => {
     expect(shapeSchema.safeParse({ ...shape, diagonals: 'one-way', divisionsAcross: 41 }).success).toBe(
       false,
     );
+    const staggered = { ...shape, diagonals: 'staggered', divisionsAlong: 41 };
+    expect(buildShape(shapeSchema.parse(staggered)).struts).toHaveLength(4981);
+    expect(shapeSchema.safeParse({ ...staggered, divisionsAlong: 42 }).success).toBe(false);
   });
 });
 
