@@ -10,7 +10,7 @@ const DAY_MS = 86_400_000;
 const words = (most: number) => z.string().trim().min(1, 'Write something here.').max(most);
 const idSchema = z
   .string()
-  .regex(/^[a-z0-9][a-z0-9-]{0,63}$/, 'Use small letters, digits and hyphens, at most 64.');
+  .regex(/^[a-z0-9][a-z0-9-]{0,59}$/, 'Use small letters, digits and hyphens, at most 60.');
 
 /** A sentence with the ids of the sources it rests on. */
 const statementSchema = z.object({ id: idSchema, text: words(600), sources: z.array(idSchema) });

@@ -17,7 +17,6 @@ export const HAZARD_LABELS: Record<Hazard, string> = {
 /** Age bands, oldest first; the muster desk confirms the band, never a date of birth. */
 export const AGE_BANDS = ['18+', '16-17', '13-15', '9-12', 'under-9'] as const;
 export type AgeBand = (typeof AGE_BANDS)[number];
-export const ageBandSchema = z.enum(AGE_BANDS);
 
 /** Plain names of the age bands. */
 export const AGE_BAND_LABELS: Record<AgeBand, string> = {

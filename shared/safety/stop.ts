@@ -1,4 +1,3 @@
-import { z } from 'zod';
 import type { Hazard } from './hazards';
 import { isHotTool, traitsOfKind, type SafetyTraits } from './tool-kinds';
 
@@ -11,13 +10,6 @@ export interface StopScope {
   /** The station of an area stop; null for the others. */
   stationId: string | null;
 }
-
-/** A stop as it is asked for: an area names its station, the others none. */
-export const stopScopeSchema = z.discriminatedUnion('scope', [
-  z.object({ scope: z.literal('hot-tools'), stationId: z.null().default(null) }),
-  z.object({ scope: z.literal('area'), stationId: z.string().min(1, 'Say which station stops.') }),
-  z.object({ scope: z.literal('everything'), stationId: z.null().default(null) }),
-]);
 
 /** A step as a stop sees it. */
 export interface StopStep {

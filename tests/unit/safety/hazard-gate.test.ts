@@ -57,8 +57,13 @@ describe('hazardGate', () => {
       attempts: [{ at: T0, wrongIds: [] }],
       passedAt: T0,
     });
-    const [missing] = hazardGate(['hot-glue'], [half], [glue, hall], NOW, ADA);
-    expect(missing).toMatchObject({ briefingKey: 'hall', reason: 'NOT_SIGNED' });
+    for (const briefings of [
+      [glue, hall],
+      [hall, glue],
+    ]) {
+      const [missing] = hazardGate(['hot-glue'], [half], briefings, NOW, ADA);
+      expect(missing).toMatchObject({ briefingKey: 'hall', reason: 'NOT_SIGNED' });
+    }
   });
 
   it('hazardGate > several hazards > one entry each in the order asked, one without a briefing', () => {

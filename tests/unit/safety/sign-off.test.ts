@@ -180,6 +180,14 @@ describe('sheetFor', () => {
     expect(sheetFor([signOff({ revokedAt: NOW - DAY })], versions, NOW)).toEqual(whole);
   });
 
+  it('sheetFor > an older one complete, a newer one revoked > the whole sheet', () => {
+    const later: VersionFacts = { version: 3, kind: 'change', effectiveFrom: NOW };
+    const revoked = signOff({ id: 'so-2', version: 2, revokedAt: T0 + 20 * MINUTE });
+    const all = [FIRST, CORRECTION, later];
+    expect(sheetFor([signOff()], all, NOW)).toMatchObject({ sheet: 'what changed', since: 1 });
+    expect(sheetFor([signOff(), revoked], all, NOW)).toEqual({ version: later, sheet: 'whole', since: null });
+  });
+
   it('sheetFor > before the change > the first version; before the first > nothing', () => {
     expect(sheetFor([], versions, NOW - 1)?.version).toBe(FIRST);
     expect(sheetFor([], versions, T0 - 1)).toBeNull();

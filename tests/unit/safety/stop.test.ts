@@ -4,7 +4,6 @@ import {
   makeSafe,
   stopCovers,
   stopCoversTool,
-  stopScopeSchema,
   traitsOfKind,
   type StopScope,
 } from '../../../shared/safety';
@@ -75,13 +74,6 @@ describe('makeSafe', () => {
       expect(makeSafe(scope)).toContain('stop.make-safe.lower-or-tie-off-load');
       expect(makeSafe(scope)).toContain('stop.make-safe.gun-in-stand');
     }
-  });
-});
-
-describe('stopScopeSchema', () => {
-  it('stopScopeSchema > an area without a station > refused; hot tools without one > read as null', () => {
-    expect(stopScopeSchema.safeParse({ scope: 'area', stationId: null }).success).toBe(false);
-    expect(stopScopeSchema.parse({ scope: 'hot-tools' })).toEqual(HOT);
   });
 });
 
