@@ -4,7 +4,7 @@ import { isRouteErrorResponse, useRouteError } from 'react-router-dom';
 import { Action } from '../components/ui/action';
 import { BeeMark } from '../components/ui/bee-mark';
 import { BrokenStrut } from '../components/ui/strut-glyph';
-import { NotFound } from './routes/not-found';
+import { Component as NotFound } from './routes/not-found';
 
 /** A part of the application that could not be fetched: the network is gone, or a newer version was put up meanwhile. */
 const isLoadFailure = (error: unknown): boolean =>
@@ -44,7 +44,7 @@ function Broken({ error }: { error: unknown }) {
 }
 
 /** What the router shows when a page throws or an address leads nowhere. */
-export function RouteProblem() {
+export function RouteError() {
   const error = useRouteError();
   if (isRouteErrorResponse(error) && error.status === 404) return <NotFound />;
   return <Broken error={error} />;

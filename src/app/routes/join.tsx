@@ -10,7 +10,11 @@ export function Component() {
   const { code = '' } = useParams();
   const navigate = useNavigate();
   return (
-    <PhoneFrame title={door.title} aside={<span className="text-pencil">{door.quick}</span>} skipWords={common.skip}>
+    <PhoneFrame
+      title={door.title}
+      aside={<span className="text-pencil">{door.quick}</span>}
+      skipWords={common.skip}
+    >
       <JoinForm initialCode={code} onJoined={(place) => void navigate(`/i/${place.installationId}/bench`)} />
       <p className="mt-6">
         <Action look="words" to="/sign-in">

@@ -18,8 +18,8 @@ import { en } from '../../lib/messages/en';
 const ITEMS: NavItem[] = [
   { to: '/kit/a', label: 'Frames', group: 'Before' },
   { to: '/kit/b', label: 'Sub-assemblies', group: 'Before' },
-  { to: '/kit/desk', label: 'Travellers', group: 'On the day' },
-  { to: '/kit/phone', label: 'My bench', group: 'On the day' },
+  { to: '/kit', label: 'Travellers', group: 'On the day' },
+  { to: '/kit/g', label: 'My bench', group: 'On the day' },
   { to: '/kit/c', label: 'Crib', group: 'On the day' },
   { to: '/kit/wall', label: 'Projector', group: 'On the day' },
   { to: '/kit/d', label: 'Day log', group: 'After' },
@@ -45,7 +45,7 @@ const piece = buildShape({
   widthMm: 2841,
   riseMm: 0,
   divisionsAlong: 2,
-  divisionsAcross: 3,
+  divisionsAcross: 4,
   diagonals: 'staggered',
 });
 
@@ -83,7 +83,7 @@ export function KitPhone() {
       linkWords={{ live: en.common.link.live('14:07'), broken: en.common.link.broken }}
       ruler={ruler}
       items={[
-        { to: '/kit/phone', label: en.common.screens.bench },
+        { to: '/kit', label: en.common.screens.bench },
         { to: '/kit/e', label: en.common.screens.briefings },
         { to: '/kit/f', label: en.common.screens.call },
       ]}

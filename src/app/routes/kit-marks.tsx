@@ -42,7 +42,7 @@ const shape = buildShape({
   widthMm: 2841,
   riseMm: 0,
   divisionsAlong: 2,
-  divisionsAcross: 3,
+  divisionsAcross: 4,
   diagonals: 'staggered',
 });
 
@@ -81,7 +81,7 @@ export function KitMarks({ theme }: { theme: string }) {
               <MarkedStick code={code} steps={stick(states)} />
             </span>
             <span className="desk:hidden">
-              <MarkedStick code={code} steps={stick(states)} pitch={32} />
+              <MarkedStick code={code} steps={stick(states)} pitch={24} />
             </span>
           </li>
         ))}
@@ -122,7 +122,7 @@ export function KitMarks({ theme }: { theme: string }) {
       <div className="grid gap-6 desk:grid-cols-2">
         <UnrolledDrawing frame={shape} unit="mm" label="V-09, South bay 2" glued={new Set([1, 2, 3, 7, 8])} />
         <DrawnFrame
-          drawing={flatDrawing(shape, { width: 320, height: 240, labelPx: 16 })}
+          drawing={flatDrawing(shape, { width: 272, height: 240, labelPx: 16 })}
           unit="inch"
           label="V-09 in inches"
           numbers="both"

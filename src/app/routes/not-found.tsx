@@ -3,7 +3,7 @@ import { BeeMark } from '../../components/ui/bee-mark';
 import { usePageTitle } from '../../lib/page-title';
 
 /** An unknown address, and one that this person may not see: both look the same. */
-export function NotFound() {
+export function Component() {
   usePageTitle('Not found');
   return (
     <main id="main" className="mx-auto grid max-w-words gap-4 p-5">

@@ -3,6 +3,9 @@ import { counted, listed } from '../formats';
 export const briefing = {
   title: 'Briefing',
   list: 'Briefings',
+  none: 'There is no briefing here yet.',
+  open: 'Read and sign',
+  firstAid: 'If somebody is hurt',
   parts: { read: 'read', answer: 'answer', sign: 'sign', countersigned: 'countersigned' },
   version: (version: number, time: string) => `version ${version}, from ${time}`,
   changed: (what: string) => `New: ${what}`,

@@ -21,6 +21,9 @@ export const stop = {
   raise: {
     action: 'Stop',
     title: 'What has to stop?',
+    area: 'one area',
+    whichArea: 'which area',
+    choose: 'Choose an area',
     reason: 'What is wrong?',
     reasonHint: 'A few words: smoke at glue 2.',
     now: 'Stop it now',

@@ -1,0 +1,108 @@
+import { useEffect, useRef } from 'react';
+import {
+  createBrowserRouter,
+  Navigate,
+  Outlet,
+  useLocation,
+  type LazyRouteFunction,
+  type RouteObject,
+} from 'react-router-dom';
+import { Pending } from '../components/ui/pending';
+import { membershipIn, useSession } from '../lib/session';
+import { RouteProblem } from './error-boundary';
+import { InstallationLayout, type PageHandle } from './installation-layout';
+import { NotFound } from './routes/not-found';
+
+type Lazy = LazyRouteFunction<RouteObject>;
+
+const page = (path: string, lazy: Lazy, handle: PageHandle = {}): RouteObject => ({ path, lazy, handle });
+
+/** Takes a reader to the new page's head when the page changes, as loading it would. */
+function Pages() {
+  const { pathname } = useLocation();
+  const shown = useRef(pathname);
+  useEffect(() => {
+    if (shown.current === pathname) return;
+    shown.current = pathname;
+    window.scrollTo(0, 0);
+    const head = document.querySelector<HTMLElement>('h1[tabindex]') ?? document.getElementById('main');
+    head?.focus({ preventScroll: true });
+  }, [pathname]);
+  return <Outlet />;
+}
+
+/** Where somebody belongs who opens the bare address. */
+function Home() {
+  const session = useSession();
+  if (session.isPending) return <Pending />;
+  const principal = session.data?.principal;
+  if (!principal) return <Navigate to="/sign-in" replace />;
+  if (principal.kind === 'display') return <Navigate to="/projector" replace />;
+  if (principal.kind === 'account') return <Navigate to="/installations" replace />;
+  const [place] = principal.installations;
+  return (
+    <Navigate
+      to={
+        place && membershipIn(session.data, place.installationId)
+          ? `/i/${place.installationId}/bench`
+          : '/join'
+      }
+      replace
+    />
+  );
+}
+
+export const router = createBrowserRouter([
+  {
+    Component: Pages,
+    ErrorBoundary: RouteProblem,
+    HydrateFallback: () => null,
+    children: [
+      { path: '/', element: <Home /> },
+      page('/sign-in', () => import('./routes/sign-in')),
+      page('/link', () => import('./routes/link')),
+      page('/reset', () => import('./routes/reset')),
+      page('/join', () => import('./routes/join')),
+      page('/join/:code', () => import('./routes/join')),
+      page('/projector', () => import('./routes/projector')),
+      page('/account', () => import('./routes/account')),
+      page('/accounts', () => import('./routes/accounts')),
+      page('/outbox', () => import('./routes/outbox')),
+      page('/installations', () => import('./routes/installations')),
+      page('/installations/new', () => import('./routes/installation-new')),
+      {
+        path: '/i/:installationId',
+        element: <InstallationLayout />,
+        children: [
+          { index: true, element: <Navigate to="bench" replace /> },
+          page('plan', () => import('./routes/plan')),
+          page('people', () => import('./routes/people')),
+          page('drawing', () => import('./routes/drawing')),
+          page('sub-assemblies', () => import('./routes/sub-assemblies')),
+          page('templates', () => import('./routes/templates')),
+          page('travellers', () => import('./routes/travellers'), { day: true }),
+          page('bench', () => import('./routes/bench'), {
+            day: true,
+            phone: (messages) => messages.bench.title,
+          }),
+          page('briefings', () => import('./routes/briefings'), {
+            phone: (messages) => messages.briefing.list,
+          }),
+          page('briefings/:key', () => import('./routes/briefing'), {
+            phone: (messages) => messages.briefing.title,
+          }),
+          page('crib', () => import('./routes/crib'), { day: true }),
+          page('countersign', () => import('./routes/briefings-desk'), { day: true }),
+          page('muster', () => import('./routes/muster'), { day: true }),
+          page('register', () => import('./routes/register')),
+          page('day-log', () => import('./routes/day-log')),
+        ],
+      },
+      // The gallery of components, for whoever works on them.
+      ...(import.meta.env.DEV
+        ? [page('/kit', async () => ({ Component: (await import('./routes/kit')).Kit }))]
+        : []),
+      { path: '*', Component: NotFound },
+    ],
+  },
+]);
