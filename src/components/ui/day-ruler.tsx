@@ -185,8 +185,14 @@ function Hours({ now, nowX, size, width, xOf, first, span }: HoursProps) {
     <g fill="var(--pencil)" textAnchor="middle">
       {hours.map((minute) => {
         const { middle, free } = place(xOf(minute - first), '00:00', look.font);
+        const atDoors = minute === first;
         return free ? (
-          <text key={minute} x={middle} y={look.hours}>
+          <text
+            key={minute}
+            x={atDoors ? 5 : middle}
+            textAnchor={atDoors ? 'start' : undefined}
+            y={look.hours}
+          >
             {timeOfDay(minute)}
           </text>
         ) : null;

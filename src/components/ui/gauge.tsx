@@ -28,7 +28,7 @@ export function Gauge({ label, share, stale = false }: GaugeProps) {
         <line
           key={i}
           x1="27%"
-          x2={i % 5 === 0 ? '82%' : '45%'}
+          x2={i % 5 === 0 ? '127%' : '64%'}
           y1={`${i * 2}%`}
           y2={`${i * 2}%`}
           className={i % 5 === 0 ? 'gauge-tick' : 'gauge-rule'}

@@ -54,6 +54,10 @@ export function ToolOutLine({ out, backBy, now, ...window }: ToolOutLineProps) {
   );
 }
 
+/** Words at the ends of the rule stay over it. */
+const anchorAt = (place: number): 'start' | 'middle' | 'end' =>
+  place < 8 ? 'start' : place > 92 ? 'end' : 'middle';
+
 /** The rule over a column of tool lines: a tick each half hour, a word each second hour. */
 export function TimeScale(window: DayWindow) {
   const at = placeOf(window);
@@ -76,13 +80,13 @@ export function TimeScale(window: DayWindow) {
         );
       })}
       {ticks
-        .filter((minute) => minute % 120 === 0 && at(timeOfDay(minute)) < 92)
+        .filter((minute) => minute % 120 === 0 && at(timeOfDay(minute)) <= 100)
         .map((minute) => (
           <text
             key={minute}
             x={`${at(timeOfDay(minute))}%`}
             y="16"
-            textAnchor={at(timeOfDay(minute)) < 8 ? 'start' : 'middle'}
+            textAnchor={anchorAt(at(timeOfDay(minute)))}
             fill="var(--pencil)"
           >
             {timeOfDay(minute)}
