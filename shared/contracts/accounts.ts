@@ -5,6 +5,11 @@ import { SITE_ROLES } from '../accounts';
 export const PASSWORD_MIN = 15;
 export const PASSWORD_MAX = 256;
 
+/** Characters as people count them: Unicode code points, each one character (NIST SP 800-63B-4, 3.1.1.2). */
+const characters = (text: string) => [...text].length;
+/** A code point takes up to two units of a string's length. */
+const TYPED_MAX = PASSWORD_MAX * 2;
+
 const email = z.preprocess(
   (value) => (typeof value === 'string' ? value.trim().toLowerCase() : value),
   z.email('This is no e-mail address. It looks like name@place.example.').max(254),
@@ -14,13 +19,16 @@ export const nameSchema = z.string().trim().min(1, 'Please fill this in.').max(8
 /** Sign in; wrong e-mail and wrong password get the same answer. */
 export const signInSchema = z.strictObject({
   email,
-  password: z.string().min(1, 'Please fill this in.').max(PASSWORD_MAX),
+  password: z.string().min(1, 'Please fill this in.').max(TYPED_MAX),
 });
 /** A new password; whether it is a common one is checked on the server. */
 export const newPasswordSchema = z
   .string()
-  .min(PASSWORD_MIN, `At least ${PASSWORD_MIN} characters. A short sentence is easy to remember.`)
-  .max(PASSWORD_MAX, `At most ${PASSWORD_MAX} characters.`);
+  .refine(
+    (password) => characters(password) >= PASSWORD_MIN,
+    `At least ${PASSWORD_MIN} characters. A short sentence is easy to remember.`,
+  )
+  .refine((password) => characters(password) <= PASSWORD_MAX, `At most ${PASSWORD_MAX} characters.`);
 /** Use a one-time link: first administrator (with e-mail and name), invitation (with name) or reset. */
 export const acceptLinkSchema = z.strictObject({
   secret: z.string().min(10).max(200),
@@ -30,7 +38,7 @@ export const acceptLinkSchema = z.strictObject({
 });
 export const askResetSchema = z.strictObject({ email });
 export const changePasswordSchema = z.strictObject({
-  current: z.string().min(1, 'Please fill this in.').max(PASSWORD_MAX),
+  current: z.string().min(1, 'Please fill this in.').max(TYPED_MAX),
   next: newPasswordSchema,
 });
 export const inviteSchema = z.strictObject({ email, name: nameSchema, siteRole: z.enum(SITE_ROLES) });

@@ -1,5 +1,6 @@
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-import type { SessionLayer } from '../../http/session';
-
-export const accountsRoutes = (_deps: Deps, _layer: SessionLayer): AnyRoute[] => [];
+export { accountsRoutes } from './accounts.routes';
+export { createAccount } from './accounts.service';
+export { ensureFirstAdminLink } from './links.service';
+export { hashPassword } from './passwords';
+export { sessionView } from './session-view';
+export { loadAccount } from './accounts.repository';
