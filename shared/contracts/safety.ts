@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { briefingBodySchema, type BriefingBody } from '../safety';
+import { briefingBodySchema, type BriefingBody, type Hazard } from '../safety';
 
 export const answerSchema = z.strictObject({
   version: z.number().int().min(1),
@@ -38,6 +38,10 @@ export const proposeVersionSchema = z.strictObject({
   basedOn: z.number().int().min(1),
 });
 
+/** Which text was read before it was seconded: the proposal's `at`. A newer proposal under the same number is another text. */
+export const secondVersionSchema = z.strictObject({ proposedAt: z.number().int() });
+export const briefingQuerySchema = z.object({ version: z.coerce.number().int().min(1).optional() });
+
 export const raiseStopSchema = z.discriminatedUnion('scope', [
   z.strictObject({
     scope: z.literal('hot-tools'),
@@ -75,6 +79,19 @@ export interface AnswerResult {
   passed: boolean;
   talkNeeded: boolean;
   results: { questionId: string; right: boolean; why: string }[];
+}
+/** Reply to a published change or a proposed correction. */
+export interface VersionOutcome {
+  version: number;
+  status: 'published' | 'proposed';
+  /** Places in hand whose holder has no valid sign-off once the change is in force; a lead looks after them. */
+  workInHand: WorkInHand[];
+}
+/** A place on a step, and whether a hazard of it is no longer signed off. */
+export interface WorkInHand {
+  stepId: string;
+  personId: string;
+  hazards: Hazard[];
 }
 /** A proposed correction that waits for a second lead. */
 export interface ProposedVersionView {

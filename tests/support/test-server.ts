@@ -103,6 +103,13 @@ export class TestClient {
     return jar.toValueString();
   }
 
+  /** Take over a session that was made elsewhere, as `signedInClient` of the fixtures does. */
+  adopt(cookie: string, csrfToken: string): this {
+    this.agent.jar.setCookie(cookie, '127.0.0.1', '/');
+    this.token = csrfToken;
+    return this;
+  }
+
   async get<T = unknown>(route: string): Promise<TestReply<T>> {
     return toReply<T>(await this.agent.get(`/api${route}`));
   }
