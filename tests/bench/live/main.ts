@@ -1,4 +1,3 @@
-import { fork, type ChildProcess } from 'node:child_process';
 import { mkdirSync, mkdtempSync, rmSync } from 'node:fs';
 import path from 'node:path';
 import { parseArgs } from 'node:util';
@@ -6,6 +5,7 @@ import Database from 'better-sqlite3';
 import type { Socket } from 'socket.io-client';
 import type { RangeMessage } from '../../../shared/contracts/live';
 import { newId } from '../../../shared/kernel/ids';
+import { startChild } from '../../support/child-server';
 import { Phones, percentiles, type ClaimResult, type Target } from './clients';
 import { benchEnv, CSRF, seedBench, type Seeded } from './seed';
 
@@ -22,31 +22,6 @@ interface Run {
   burstMs: number;
   messages: number;
   acknowledged: string[];
-}
-
-function start(
-  script: string,
-  args: string[],
-  env: Record<string, string>,
-): Promise<{ child: ChildProcess; url: string }> {
-  const child = fork(script, args, {
-    execArgv: ['--import', 'tsx'],
-    env: { ...process.env, ...env },
-    stdio: ['ignore', 'ignore', 'inherit', 'ipc'],
-  });
-  return new Promise((resolve, reject) => {
-    child.once('exit', (code) => reject(new Error(`${script} ended with ${String(code)}`)));
-    child.once('message', (message) => {
-      const { listening } = message as { listening: string };
-      resolve({ child, url: listening.replace('localhost', '127.0.0.1') });
-    });
-  });
-}
-
-async function stop(child: ChildProcess): Promise<void> {
-  const ended = new Promise((resolve) => child.once('exit', resolve));
-  child.kill('SIGTERM');
-  await ended;
 }
 
 /** The steady part, then the burst. */
@@ -161,16 +136,16 @@ async function main(): Promise<void> {
   const databaseFile = path.join(folder, 'live.sqlite');
   try {
     const seeded = await seedBench(databaseFile, people, steps);
-    const floorServer = await start(
-      'tests/bench/live/floor-server.ts',
-      [path.join(folder, 'floor.sqlite'), '600', String(WRITES_OF_A_CLAIM)],
-      {},
-    );
+    const floorServer = await startChild('tests/bench/live/floor-server.ts', {}, [
+      path.join(folder, 'floor.sqlite'),
+      '600',
+      String(WRITES_OF_A_CLAIM),
+    ]);
     const floor = await measure(floorTarget(floorServer.url), seeded, people);
-    await stop(floorServer.child);
-    const server = await start('server/main.ts', [], benchEnv(databaseFile));
+    await floorServer.stop();
+    const server = await startChild('server/main.ts', benchEnv(databaseFile));
     const run = await measure(strutbee(server.url, seeded), seeded, people);
-    await stop(server.child);
+    await server.stop();
     const { lost, doubleWinners } = audit(databaseFile, run.acknowledged);
     const { acknowledged: _acknowledged, messages, ...figures } = run;
     console.log(

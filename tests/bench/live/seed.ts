@@ -46,8 +46,9 @@ export async function seedBench(
      VALUES (?, 'Benchmark', '', 'UTC', 'mm', 5000, 'published', 'BENCH2', ?, ?, ?, 0, 0)`,
     [installationId, now, JSON.stringify({ maxInHand: 100_000, ageChanges: [] }), now],
   );
-  await writer.runPlain({ maker: SERVER_ACTOR, installationId }, async ({ manager, revision }) => {
-    const at = await revision();
+  await writer.runPlain({ maker: SERVER_ACTOR, installationId }, async (scope) => {
+    const { manager } = scope;
+    const at = await scope.revision();
     const stationId = newId();
     await manager.query(
       `INSERT INTO station (id, installation_id, name, kind, places, position, revision) VALUES (?, ?, 'bench', 'bench', 10, 1, ?)`,
