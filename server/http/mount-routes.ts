@@ -60,14 +60,14 @@ async function serve(
       return actor;
     },
     installationId: installationId ?? '',
-    write: async (work, status = 200) => {
+    write: async (work, status = 200, madeId) => {
       const maker = actor?.maker ?? {
         actor: principal ? principalKey(principal) : `visitor:${req.ip ?? ''}`,
         personId: null,
       };
       const idempotency = spec.unkeyed ? undefined : keyOf(req, spec, params, body);
       const outcome = await deps.writer.run(
-        { maker, installationId: installationId ?? null, idempotency },
+        { maker, installationId: madeId ?? installationId ?? null, idempotency },
         work,
         status,
       );

@@ -19,8 +19,11 @@ export interface RouteRequest<B, Q> {
   /** Set on every route below `/api/installations/:installationId`; anything else is an error of the server. */
   actor: Actor;
   installationId: string;
-  /** Run a use case under the request's key and answer with what it returns. */
-  write(work: (scope: WriteScope) => Promise<unknown>, status?: number): Promise<Reply>;
+  /**
+   * Run a use case under the request's key and answer with what it returns.
+   * @param madeId the installation that this very use case makes; otherwise it is the path's
+   */
+  write(work: (scope: WriteScope) => Promise<unknown>, status?: number, madeId?: string): Promise<Reply>;
   req: Request;
   res: Response;
 }

@@ -1,4 +1,5 @@
 import type { Deps } from '../deps';
+import { openMail } from './mail.job';
 
 /** The server's own work beside requests. */
 export interface Jobs {
@@ -15,35 +16,60 @@ interface Recurring {
 }
 
 const SWEEP_MS = 600_000;
+/** Letters are sent when they are written; this turn is for those that have to be tried again. */
+const MAIL_MS = 15_000;
 
 /** Start the server's jobs: sweep old sessions, end drying clocks, send letters. */
-export function startJobs(deps: Deps): Promise<Jobs> {
+export async function startJobs(deps: Deps): Promise<Jobs> {
+  const mail = await openMail(deps);
+  const sendLetters: Recurring = { name: 'send letters', everyMs: MAIL_MS, run: () => mail.run() };
   const recurring: Recurring[] = [
     { name: 'sweep sessions', everyMs: SWEEP_MS, run: () => deps.sessions.sweep() },
+    sendLetters,
   ];
-  const running = new Set<Promise<void>>();
+  const turns = new Turns(deps);
   const timers = recurring.map((job) => {
-    let busy = false;
-    const timer = setInterval(() => {
-      if (busy) return;
-      busy = true;
-      const turn = job
-        .run()
-        .catch((error: unknown) => deps.log.error({ err: error, job: job.name }, 'a job failed'))
-        .finally(() => {
-          busy = false;
-          running.delete(turn);
-        });
-      running.add(turn);
-    }, job.everyMs);
+    const timer = setInterval(() => turns.take(job), job.everyMs);
     timer.unref();
     return timer;
   });
-  return Promise.resolve({
-    wakeMail: () => undefined,
+  turns.take(sendLetters);
+  return {
+    wakeMail: () => turns.take(sendLetters),
     stop: async () => {
       for (const timer of timers) clearInterval(timer);
-      await Promise.all(running);
+      await turns.end();
+      await mail.close();
     },
-  });
+  };
+}
+
+/** Runs jobs one turn at a time each; a job that is asked for while it runs gets one more turn. */
+class Turns {
+  private readonly running = new Map<Recurring, Promise<void>>();
+  private readonly again = new Set<Recurring>();
+  private ended = false;
+
+  constructor(private readonly deps: Deps) {}
+
+  take(job: Recurring): void {
+    if (this.ended) return;
+    if (this.running.has(job)) {
+      this.again.add(job);
+      return;
+    }
+    const turn = job
+      .run()
+      .catch((error: unknown) => this.deps.log.error({ err: error, job: job.name }, 'a job failed'))
+      .finally(() => {
+        this.running.delete(job);
+        if (this.again.delete(job)) this.take(job);
+      });
+    this.running.set(job, turn);
+  }
+
+  async end(): Promise<void> {
+    this.ended = true;
+    await Promise.all(this.running.values());
+  }
 }

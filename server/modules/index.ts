@@ -5,17 +5,25 @@ import type { AnyLiveSource } from '../realtime/live-source';
 import { accountsRoutes } from './accounts';
 import { cribLive, cribRoutes } from './crib';
 import { framesRoutes } from './frames';
-import { installationsLive, installationsRoutes } from './installations';
+import { installationsLive, installationsRoutes, type WhenMade } from './installations';
 import { mailRoutes } from './mail';
-import { peopleLive, peopleRoutes } from './people';
+import { addFirstOrganiser, peopleLive, peopleRoutes } from './people';
 import { progressRoutes } from './progress';
-import { safetyLive, safetyRoutes } from './safety';
+import { installShippedBriefings, safetyLive, safetyRoutes } from './safety';
 import { travellersLive, travellersRoutes } from './travellers';
+
+/** What areas add to an installation that was just made; they know of installations, not the other way round. */
+export const whenInstallationMade: readonly WhenMade[] = [
+  addFirstOrganiser,
+  async (scope, { installationId }) => {
+    await installShippedBriefings(scope, installationId);
+  },
+];
 
 /** Every route of the server; the permission test walks this list. */
 export const allRoutes = (deps: Deps, layer: SessionLayer): AnyRoute[] => [
   ...accountsRoutes(deps, layer),
-  ...installationsRoutes(deps, layer),
+  ...installationsRoutes(deps, layer, whenInstallationMade),
   ...peopleRoutes(deps, layer),
   ...safetyRoutes(deps),
   ...framesRoutes(deps),

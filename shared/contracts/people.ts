@@ -32,8 +32,11 @@ export const joinSchema = z
       });
     }
   });
-/** The desk confirms the person and the age band it saw. */
-export const confirmSchema = z.strictObject({ ageBand: z.enum(AGE_BANDS) });
+/** The desk confirms the person and the age band it saw; for a minor who named no adult, it also writes who that is. */
+export const confirmSchema = z.strictObject({
+  ageBand: z.enum(AGE_BANDS),
+  adultName: z.string().trim().max(60).optional(),
+});
 /** A duty given to or taken from a person who is in the installation already. */
 export const dutySchema = z.strictObject({ duty: z.enum(DUTIES).exclude(['volunteer']), on: z.boolean() });
 /** An account gets a place and duties in the installation. */
@@ -49,6 +52,7 @@ export const addMemberSchema = z.strictObject({
 
 export type JoinInput = z.input<typeof joinSchema>;
 export type Join = z.infer<typeof joinSchema>;
+export type Confirm = z.infer<typeof confirmSchema>;
 export type AddMember = z.infer<typeof addMemberSchema>;
 
 /** What a poster's code opens, before joining. */
@@ -57,4 +61,13 @@ export interface CodeView {
   name: string;
   venue: string;
   onSite: number;
+}
+
+/** What a person who leaves, or is removed, leaves behind. */
+export interface LeavingView {
+  personId: string;
+  /** Steps whose places were given back. */
+  givenBack: string[];
+  /** Tools that are still out with this person. */
+  toolsOut: { id: string; number: string; name: string }[];
 }

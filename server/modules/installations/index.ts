@@ -1,8 +1,14 @@
-import type { AnyLiveSource } from '../../realtime/live-source';
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-import type { SessionLayer } from '../../http/session';
-
-export const installationsRoutes = (_deps: Deps, _layer: SessionLayer): AnyRoute[] => [];
-
-export const installationsLive: AnyLiveSource[] = [];
+export { addBuildDay, addStation } from './days-stations.service';
+export { addDisplay, displayUrl, newDisplayToken } from './displays.service';
+export { installationsLive } from './installations.live';
+export { installationByCode, installationById } from './installations.repository';
+export { installationsRoutes } from './installations.routes';
+export {
+  assertOpen,
+  createInstallation,
+  editInstallation,
+  joinUrl,
+  publishInstallation,
+  type WhenMade,
+} from './installations.service';
+export { SAFETY_LEADS_NEEDED } from './publish-checks';

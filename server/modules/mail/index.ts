@@ -1,4 +1,3 @@
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-
-export const mailRoutes = (_deps: Deps): AnyRoute[] => [];
+export { sendDueLetters, smtpPostman, type Postman } from './mail.service';
+export { openOutbox, type Outbox } from './outbox';
+export { mailRoutes } from './mail.routes';

@@ -1,8 +1,11 @@
-import type { AnyLiveSource } from '../../realtime/live-source';
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-import type { SessionLayer } from '../../http/session';
-
-export const peopleRoutes = (_deps: Deps, _layer: SessionLayer): AnyRoute[] => [];
-
-export const peopleLive: AnyLiveSource[] = [];
+export { joinInstallation } from './join.service';
+export { peopleLive } from './people.live';
+export { peopleRoutes } from './people.routes';
+export {
+  addFirstOrganiser,
+  addMember,
+  changeDuty,
+  confirmPerson,
+  leaveSite,
+  removePerson,
+} from './people.service';
