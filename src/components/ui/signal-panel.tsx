@@ -27,15 +27,19 @@ export function SignalPanel({ word, title, children }: SignalPanelProps) {
   const id = useId();
   const { colour, alertSymbol } = SIGNAL_STYLE[word];
   return (
-    <section className="signal" data-colour={colour} aria-labelledby={id}>
+    <div className="signal" data-colour={colour} role="group" aria-labelledby={`${id} ${id}-title`}>
       <p className="signal-word" id={id}>
         {alertSymbol && <AlertSymbol />}
         <span>{word}</span>
       </p>
       <div className="signal-text">
-        {title !== undefined && <p className="signal-title">{title}</p>}
+        {title !== undefined && (
+          <p className="signal-title" id={`${id}-title`}>
+            {title}
+          </p>
+        )}
         {children}
       </div>
-    </section>
+    </div>
   );
 }

@@ -23,8 +23,8 @@ function StopStrut() {
   return (
     <svg className="stop-strut" aria-hidden="true">
       <line x1="0" x2="100%" y1="50%" y2="50%" className="stop-line" />
-      <line x1="47%" x2="47%" y1="4%" y2="96%" className="stop-bar" />
-      <line x1="53%" x2="53%" y1="4%" y2="96%" className="stop-bar" />
+      <line x1="50%" x2="50%" y1="4%" y2="96%" className="stop-bar" />
+      <line x1="50%" x2="50%" y1="4%" y2="96%" className="stop-bar" />
       <circle cx="0" cy="50%" className="stop-joint" />
       <circle cx="100%" cy="50%" className="stop-joint" />
     </svg>

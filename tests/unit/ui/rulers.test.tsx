@@ -107,6 +107,6 @@ describe('small things', () => {
   ] as const)('SignalPanel > %s > safety alert symbol: %s (ANSI Z535.4)', (word, symbol) => {
     const { container } = render(<SignalPanel word={word}>Text</SignalPanel>);
     expect(container.querySelector('.signal-symbol') !== null).toBe(symbol);
-    expect(screen.getByRole('region', { name: word })).toBeTruthy();
+    expect(screen.getByRole('group', { name: word })).toBeTruthy();
   });
 });
