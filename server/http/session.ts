@@ -15,6 +15,8 @@ declare module 'express-session' {
   interface SessionData {
     /** When the session was signed in, ms of the real clock. */
     signedInAt?: number;
+    /** How long it lives from then on whatever is done with it, ms of the real clock. */
+    lifeMs?: number;
   }
 }
 
@@ -52,7 +54,7 @@ export function sessionLayer(options: {
   });
   const absolute: RequestHandler = (req, _res, next) => {
     const since = req.session.signedInAt;
-    if (since === undefined || Date.now() - since < ACCOUNT_LIFE_MS) {
+    if (since === undefined || Date.now() - since < (req.session.lifeMs ?? ACCOUNT_LIFE_MS)) {
       next();
       return;
     }
@@ -81,6 +83,7 @@ export function signIn(req: Request, principal: Principal, lifeMs: number): Prom
         return;
       }
       req.session.signedInAt = Date.now();
+      req.session.lifeMs = lifeMs;
       req.session.cookie.maxAge = lifeMs;
       req.session.save((failed: unknown) =>
         failed

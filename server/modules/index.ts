@@ -13,7 +13,7 @@ import { installShippedBriefings, safetyLive, safetyRoutes } from './safety';
 import { travellersLive, travellersRoutes } from './travellers';
 
 /** What areas add to an installation that was just made; they know of installations, not the other way round. */
-export const whenInstallationMade: readonly WhenMade[] = [
+const whenInstallationMade: readonly WhenMade[] = [
   addFirstOrganiser,
   async (scope, { installationId }) => {
     await installShippedBriefings(scope, installationId);

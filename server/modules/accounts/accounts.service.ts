@@ -10,7 +10,7 @@ import { inviteLetter, passwordChangedLetter, resetLetter } from './letters';
 import { issueLink, passwordProblems } from './links.service';
 import { hashPassword, passwordMatches } from './passwords';
 
-export interface Inviter {
+interface Inviter {
   name: string;
   siteRole: SiteRole;
 }
@@ -188,8 +188,8 @@ export async function changePassword(
 export async function createAccount(
   scope: WriteScope,
   input: { email: string; name: string; siteRole: SiteRole; passwordHash: string },
-  id = newId(),
 ): Promise<string> {
+  const id = newId();
   await scope.manager.insert(Account, { id, ...input, createdAt: scope.now, disabledAt: null });
   await scope.log({ action: 'account.accepted', subject: { accountId: id, kind: 'seed' } });
   return id;

@@ -21,8 +21,8 @@ import {
 } from './installations.repository';
 import { publishChecks } from './publish-checks';
 
-/** Who makes an installation: an account, or nobody for a seed that adds its people itself. */
-export interface Creator {
+/** The account that makes an installation. */
+interface Creator {
   accountId: string;
   name: string;
 }
@@ -30,10 +30,10 @@ export interface Creator {
 /** What other areas add to an installation that was just made, in the same unit of work. */
 export type WhenMade = (
   scope: WriteScope,
-  made: { installationId: string; creator: Creator | null },
+  made: { installationId: string; creator: Creator },
 ) => Promise<void>;
 
-export const DEFAULT_MAX_IN_HAND = 2;
+const DEFAULT_MAX_IN_HAND = 2;
 
 const closed = () =>
   new AppError('INSTALLATION_CLOSED', 'This installation is closed: nothing on it changes any more.');
@@ -59,21 +59,19 @@ async function freshCode(scope: WriteScope): Promise<string> {
 /**
  * Make an installation, a draft until it is published. The scope must belong to this new id.
  * @param whenMade what other areas add: the creator as organiser, the shipped briefings
- * @param joinCode for seeds; a new one otherwise
  */
 export async function createInstallation(
   scope: WriteScope,
   installationId: string,
   input: CreateInstallation,
-  creator: Creator | null,
+  creator: Creator,
   whenMade: readonly WhenMade[],
-  joinCode?: string,
 ): Promise<{ id: string }> {
   await scope.manager.insert(Installation, {
     id: installationId,
     ...input,
     status: 'draft',
-    joinCode: joinCode ?? (await freshCode(scope)),
+    joinCode: await freshCode(scope),
     joinCodeAt: scope.now,
     settings: { maxInHand: DEFAULT_MAX_IN_HAND, ageChanges: [] },
     createdAt: scope.now,

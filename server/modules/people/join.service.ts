@@ -1,7 +1,7 @@
 import { tz } from '@date-fns/tz';
 import { parse } from 'date-fns';
 import type { CodeView, Join } from '../../../shared/contracts/people';
-import { newId, normaliseCode } from '../../../shared/kernel/ids';
+import { normaliseCode } from '../../../shared/kernel/ids';
 import type { WriteScope } from '../../db/write';
 import type { Deps } from '../../deps';
 import { AppError } from '../../http/app-error';
@@ -67,21 +67,21 @@ const fieldsOf = (input: Answers) => ({
  * has confirmed them, joining again corrects what they typed.
  * @param who the session that asks, if it has one
  * @param id id of a new person
- * @returns the person's id and whether the person is new
+ * @returns the person's id
  */
 export async function joinInstallation(
   scope: WriteScope,
   installationId: string,
   input: Answers,
   who: Principal | null,
-  id = newId(),
-): Promise<{ personId: string; isNew: boolean }> {
+  id: string,
+): Promise<string> {
   const { status } = await assertOpen(scope, installationId);
   if (status === 'draft') throw notPublished();
   const known = await alreadyIn(scope, installationId, who);
   if (known && known.removed_at === null) {
     if (known.confirmed_at === null) await correct(scope, known, input);
-    return { personId: known.id, isNew: false };
+    return known.id;
   }
   const revision = await scope.revision();
   const fresh = {
@@ -114,7 +114,7 @@ export async function joinInstallation(
   }
   scope.changed('people', personId);
   await scope.log({ action: 'person.joined', subject: { personId }, forPersonId: personId });
-  return { personId, isNew: true };
+  return personId;
 }
 
 async function alreadyIn(

@@ -9,9 +9,11 @@ import {
   type Join,
 } from '../../../shared/contracts/people';
 import { newId, normaliseCode } from '../../../shared/kernel/ids';
+import type { ChangeMaker } from '../../db/write';
 import type { Deps } from '../../deps';
 import { AppError, notFound } from '../../http/app-error';
 import { FailureLimit } from '../../http/failure-limit';
+import { principalKey, type Principal } from '../../http/principal';
 import { route, type AnyRoute } from '../../http/route';
 import { signIn, type SessionLayer } from '../../http/session';
 import { sessionView } from '../accounts';
@@ -62,8 +64,8 @@ function joinRoutes(deps: Deps, layer: SessionLayer): AnyRoute[] {
         const { code, ...answers } = body;
         const { installationId } = find(req.sessionID, code);
         const id = newId();
-        const { personId } = await deps.writer.runPlain(
-          { maker: { actor: `person:${id}`, personId: id }, installationId },
+        const personId = await deps.writer.runPlain(
+          { maker: joiner(deps, principal, installationId, id), installationId },
           (scope) => joinInstallation(scope, installationId, answers, principal, id),
         );
         // An account keeps its own session: it takes part through its account.
@@ -75,6 +77,14 @@ function joinRoutes(deps: Deps, layer: SessionLayer): AnyRoute[] {
       },
     }),
   ];
+}
+
+/** Who the day log says has joined: the account, who they are here already, or the person they become. */
+function joiner(deps: Deps, principal: Principal | null, installationId: string, newId: string): ChangeMaker {
+  const known = principal && deps.principals.actorIn(principal, installationId);
+  if (known) return known.maker;
+  if (principal?.kind === 'account') return { actor: principalKey(principal), personId: null };
+  return { actor: `person:${newId}`, personId: newId };
 }
 
 const deskRoutes = (): AnyRoute[] => [

@@ -35,7 +35,6 @@ async function save(scope: WriteScope, personId: string, fields: Partial<Person>
 
 /** Who makes an installation is its first organiser and needs no desk to be confirmed. */
 export const addFirstOrganiser: WhenMade = async (scope, { installationId, creator }) => {
-  if (!creator) return;
   const { firstName, initial } = splitName(creator.name);
   const id = newId();
   await scope.manager.insert(Person, {
@@ -81,7 +80,6 @@ export async function addMember(
   scope: WriteScope,
   installationId: string,
   input: AddMember,
-  id = newId(),
 ): Promise<{ personId: string }> {
   await assertOpen(scope, installationId);
   const account = await loadAccount(scope.manager, { email: input.email });
@@ -105,11 +103,11 @@ export async function addMember(
     confirmedBy: null,
     leftAt: null,
   };
-  const personId = known?.id ?? id;
+  const personId = known?.id ?? newId();
   if (known) await save(scope, known.id, { ...fields, removedAt: null });
   else {
     await scope.manager.insert(Person, {
-      id,
+      id: personId,
       installationId,
       accountId: account.id,
       number: await nextNumber(scope.manager, installationId),
@@ -121,7 +119,7 @@ export async function addMember(
       ...fields,
       revision: await scope.revision(),
     });
-    scope.changed('people', id);
+    scope.changed('people', personId);
   }
   await scope.log({
     action: 'person.added',
