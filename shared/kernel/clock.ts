@@ -5,10 +5,16 @@ export interface Clock {
   readonly rate: number;
 }
 
-/** The machine's clock, run `rate` times as fast from the moment it is made. */
-export function systemClock(rate = 1): Clock {
-  const start = Date.now();
-  return { rate, now: () => (rate === 1 ? Date.now() : start + Math.floor((Date.now() - start) * rate)) };
+/**
+ * The machine's clock.
+ * @param rate how many times as fast it runs, 1 or more
+ * @param from ms UTC it shows at first; the machine's own time when left out
+ */
+export function systemClock(rate = 1, from?: number): Clock {
+  if (rate === 1 && from === undefined) return { rate, now: () => Date.now() };
+  const real = Date.now();
+  const shown = from ?? real;
+  return { rate, now: () => shown + Math.floor((Date.now() - real) * rate) };
 }
 
 /** A clock that only moves when told to, for tests. */
