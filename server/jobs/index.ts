@@ -1,4 +1,5 @@
 import type { Deps } from '../deps';
+import { endDueDrying } from '../modules/travellers';
 import { openMail } from './mail.job';
 
 /** The server's own work beside requests. */
@@ -18,6 +19,8 @@ interface Recurring {
 const SWEEP_MS = 600_000;
 /** Letters are sent when they are written; this turn is for those that have to be tried again. */
 const MAIL_MS = 15_000;
+/** Drying clocks run in minutes; a step that is late by a few seconds is nobody's loss. */
+const DRYING_MS = 3000;
 
 /** Start the server's jobs: sweep old sessions, end drying clocks, send letters. */
 export async function startJobs(deps: Deps): Promise<Jobs> {
@@ -26,6 +29,13 @@ export async function startJobs(deps: Deps): Promise<Jobs> {
   const recurring: Recurring[] = [
     { name: 'sweep sessions', everyMs: SWEEP_MS, run: () => deps.sessions.sweep() },
     sendLetters,
+    {
+      name: 'end drying clocks',
+      everyMs: DRYING_MS,
+      run: async () => {
+        await endDueDrying(deps);
+      },
+    },
   ];
   const turns = new Turns(deps);
   const timers = recurring.map((job) => {
