@@ -1,4 +1,4 @@
-import type { BriefingVersion } from './briefing';
+import type { BriefingVersion } from './briefing-schema';
 
 /** What the rules need to know of a version. */
 export type VersionFacts = Pick<BriefingVersion, 'version' | 'kind' | 'effectiveFrom'>;

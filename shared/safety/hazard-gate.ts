@@ -1,4 +1,4 @@
-import type { Briefing } from './briefing';
+import type { Briefing } from './briefing-schema';
 import type { VersionFacts } from './briefing-versions';
 import type { Hazard, Message } from './hazards';
 import { bestSignOff, nearness, type SignOff, type SignOffProblem } from './sign-off';

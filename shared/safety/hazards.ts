@@ -1,9 +1,6 @@
-import { z } from 'zod';
-
 /** Hazards a step or a tool may carry; each needs its own valid sign-off. */
 export const HAZARDS = ['hot-glue', 'cutting', 'solvent-spray', 'ladder', 'overhead'] as const;
 export type Hazard = (typeof HAZARDS)[number];
-export const hazardSchema = z.enum(HAZARDS);
 
 /** Plain names of the hazards, as they stand in a sentence. */
 export const HAZARD_LABELS: Record<Hazard, string> = {

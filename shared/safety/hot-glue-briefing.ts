@@ -1,4 +1,4 @@
-import type { Briefing, BriefingBody, BriefingVersion, SourceNote } from './briefing';
+import type { Briefing, BriefingBody, BriefingVersion, SourceNote } from './briefing-schema';
 
 const NO_EDITION = 'no edition given';
 

@@ -1,6 +1,7 @@
 export * from './age-rules';
 export * from './age-table';
 export * from './briefing';
+export * from './briefing-schema';
 export * from './briefing-versions';
 export * from './countersign';
 export * from './hazard-gate';

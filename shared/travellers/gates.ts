@@ -1,6 +1,9 @@
 import type { Duty } from '../accounts';
 import type { ErrorCode } from '../contracts/errors';
-import { ageVerdict, stopCovers, type AgeBand, type AgeRules, type Hazard, type StopScope } from '../safety';
+import { ageVerdict } from '../safety/age-rules';
+import type { AgeRules } from '../safety/age-table';
+import type { AgeBand, Hazard } from '../safety/hazards';
+import { stopCovers, type StopScope } from '../safety/stop';
 import type { Step } from './step';
 
 export type RefusalCode = Extract<
