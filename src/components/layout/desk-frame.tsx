@@ -1,4 +1,4 @@
-import { useEffect, useId, useState } from 'react';
+import { useId, useState } from 'react';
 import type { ReactNode } from 'react';
 import { Link, NavLink, useLocation } from 'react-router-dom';
 import { BeeMark } from '../ui/bee-mark';
@@ -36,13 +36,11 @@ export type DeskFrameProps = {
 
 /** The frame of desk pages: a narrow rule with the screens as its ticks, a title block at its foot, the page beside it. */
 export function DeskFrame({ items, titleBlock, home = '/', ruler, stop, children }: DeskFrameProps) {
-  const [open, setOpen] = useState(false);
   const { pathname } = useLocation();
   const menuId = useId();
-  // The menu of a narrow window closes when it has led somewhere.
-  useEffect(() => {
-    setOpen(false);
-  }, [pathname]);
+  // The menu of a narrow window belongs to the page it was opened on: it closes when it has led somewhere.
+  const [openOn, setOpenOn] = useState<string | null>(null);
+  const open = openOn === pathname;
   return (
     <div className="desk">
       <SkipLink />
@@ -64,7 +62,7 @@ export function DeskFrame({ items, titleBlock, home = '/', ruler, stop, children
             aria-expanded={open}
             aria-controls={menuId}
             onClick={() => {
-              setOpen(!open);
+              setOpenOn(open ? null : pathname);
             }}
           >
             {open ? 'Close' : 'Menu'}

@@ -37,7 +37,7 @@ export type ActionProps = {
 };
 
 /** Something a person can do, drawn as a pencil frame. Renders a button, or a link when it leads somewhere. */
-export function Action(props: ActionProps) {
+export function Action({ ref, ...props }: ActionProps) {
   const { children, look = 'crossed', size, detail, to, href, wide, label, reason, busy, disabled } = props;
   const reasonId = useId();
   const off = disabled === true || reason !== undefined;
@@ -71,13 +71,13 @@ export function Action(props: ActionProps) {
   const button = (
     <button
       {...shared}
-      ref={props.ref}
+      ref={ref}
       type={props.type ?? 'button'}
       form={props.form}
       autoFocus={props.autoFocus}
       disabled={disabled === true && reason === undefined}
-      aria-disabled={still || undefined}
-      aria-busy={busy || undefined}
+      aria-disabled={still ? true : undefined}
+      aria-busy={busy ? true : undefined}
       aria-pressed={props.pressed}
       aria-expanded={props.expanded}
       aria-controls={props.controls}

@@ -129,7 +129,7 @@ export function DrawnFrame({ drawing, ...props }: DrawnProps & { drawing: FlatDr
       className="drawn-frame"
     >
       {drawing.lines.map(({ strut, x1, y1, x2, y2, from, to }) => {
-        const made = glued !== undefined && glued.has(from) && glued.has(to);
+        const made = glued?.has(from) === true && glued.has(to);
         return (
           <line
             key={strut}
@@ -160,7 +160,7 @@ export function DrawnFrame({ drawing, ...props }: DrawnProps & { drawing: FlatDr
         ))}
       {withJoints &&
         drawing.points
-          .filter(({ joint }) => glued === undefined || !glued.has(joint))
+          .filter(({ joint }) => glued?.has(joint) !== true)
           .map(({ joint, label }) => (
             <text
               key={joint}

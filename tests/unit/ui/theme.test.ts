@@ -1,13 +1,14 @@
 // @vitest-environment jsdom
 import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
+import { runInThisContext } from 'node:vm';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { chooseTheme, startTheme, themeChoice } from '../../../src/lib/theme';
 
 /** What index.html runs before the first paint. */
 const early = readFileSync(resolve('public/theme.js'), 'utf8');
 const runEarly = (): void => {
-  new Function(early)();
+  runInThisContext(early);
 };
 
 const deviceIs = (dark: boolean): void => {
