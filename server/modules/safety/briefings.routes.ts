@@ -14,7 +14,8 @@ import type { Actor } from '../../http/principal';
 import { route, type AnyRoute } from '../../http/route';
 import { answerSheet, signBriefing } from './answers.service';
 import { readBriefingText, readProposals, readSignature } from './briefings.repository';
-import { proposeVersion, secondCorrection, withdrawProposal } from './briefings.service';
+import { proposeVersion } from './briefings.service';
+import { secondCorrection, withdrawProposal } from './corrections.service';
 import { countersignSignOff, noteTalk, revokeSignOff } from './sign-offs.service';
 
 /** A person's id; a site admin who takes no part in the installation has none and signs nothing. */

@@ -83,7 +83,7 @@ export async function missingSignOffs(
 }
 
 /** A raised stop, as the rules and the words of a refusal need it. */
-export interface ActiveStop extends StopScope {
+interface ActiveStop extends StopScope {
   stopId: string;
   raisedBy: string;
   raisedAt: number;

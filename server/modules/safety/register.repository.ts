@@ -67,11 +67,12 @@ function secretOf({ salt, personal }: RawRow): RegisterSecret | null {
   return { salt: salt ?? '', personal: parsed<PersonalFields>(personal) ?? {} };
 }
 
-/** What a check of a whole register found. */
-export type RegisterCheck = RegisterView['verified'];
-
 /** First fault of a register: of the chain, then of the fields beside it. */
-function check(installationId: string, entries: readonly Entry[], printed?: PrintedHead): RegisterCheck {
+function check(
+  installationId: string,
+  entries: readonly Entry[],
+  printed?: PrintedHead,
+): RegisterView['verified'] {
   const genesis = genesisHash(sha256, 'sign-offs', installationId);
   const { chain, alteredPersonal, erased } = verifyRegister(sha256, genesis, entries, printed);
   if (!chain.ok) return { ok: false, seq: chain.seq, why: chain.why };

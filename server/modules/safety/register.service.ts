@@ -17,7 +17,7 @@ export const sha256: Sha256 = (text) => createHash('sha256').update(text, 'utf8'
 const randomBytes = (length: number) => globalThis.crypto.getRandomValues(new Uint8Array(length));
 
 /** What becomes a row of the register. */
-export interface RegisterEntry {
+interface RegisterEntry {
   kind: RegisterKind;
   /** Ids and numbers; they are sealed for good, so nothing personal may stand here. */
   ids: Record<string, string | number>;

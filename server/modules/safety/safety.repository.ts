@@ -3,11 +3,6 @@ import type { Duty } from '../../../shared/accounts';
 import type { BriefingBody, Hazard, SignOff, VersionFacts } from '../../../shared/safety';
 import { AppError, notFound } from '../../http/app-error';
 
-export interface InstallationFacts {
-  name: string;
-  timeZone: string;
-}
-
 /**
  * The installation, when it still takes changes.
  * @throws AppError INSTALLATION_CLOSED; notFound for an unknown id
@@ -15,16 +10,16 @@ export interface InstallationFacts {
 export async function openInstallation(
   manager: EntityManager,
   installationId: string,
-): Promise<InstallationFacts> {
-  const [row] = await manager.query<{ name: string; time_zone: string; status: string }[]>(
-    'SELECT name, time_zone, status FROM installation WHERE id = ?',
+): Promise<{ timeZone: string }> {
+  const [row] = await manager.query<{ time_zone: string; status: string }[]>(
+    'SELECT time_zone, status FROM installation WHERE id = ?',
     [installationId],
   );
   if (!row) throw notFound();
   if (row.status === 'closed') {
     throw new AppError('INSTALLATION_CLOSED', 'This installation is closed: nothing on it changes any more.');
   }
-  return { name: row.name, timeZone: row.time_zone };
+  return { timeZone: row.time_zone };
 }
 
 export interface BriefingFacts {
