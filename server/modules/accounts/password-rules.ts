@@ -12,6 +12,7 @@ const PRODUCT_WORDS = [
 /** Characters that may stand beside guessable parts without making them any less guessable. */
 const SPARE_CHARACTERS = 2;
 const SHORTEST_WORD = 4;
+const YEAR = /^(19|20)\d\d$/;
 const LONGEST_PERIOD = 6;
 
 /** Words of an e-mail address, a name or a title that must not make up a password. */
@@ -78,7 +79,8 @@ function coveredBy(text: string, commonWord: string, free: ReadonlySet<string>):
     for (let to = at + 3; to <= runEnd(text, at); to += 1) reach(to, here);
     const figures = /^\d{2,20}/.exec(text.slice(at))?.[0] ?? '';
     for (let length = 2; length <= figures.length; length += 1) {
-      if (length === 4 || COMMON.has(figures.slice(0, length))) reach(at + length, here);
+      const part = figures.slice(0, length);
+      if (YEAR.test(part) || COMMON.has(part)) reach(at + length, here);
     }
   }
   return (over[text.length] ?? Infinity) <= SPARE_CHARACTERS;
