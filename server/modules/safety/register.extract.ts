@@ -41,10 +41,10 @@ export function registerExtract(
     `Rows          ${count}`,
     `Head hash     ${headHash}`,
     verified.ok
-      ? 'Chain         verified: no row was altered, removed or put in between'
+      ? 'Chain         verified: every row follows from the one before, none was altered'
       : `Chain         NOT INTACT at row ${verified.seq}: ${verified.why}`,
     '',
-    'Keep this page. Later, this command finds rows that were removed or rewritten since:',
+    'Keep this page. Rows cut off the end show only against a page like this one, with this command:',
     `npm run verify:register -- --installation ${installationId} --count ${count} --head ${headHash}`,
     '',
     ...register.rows.map((row) => rowLine(row, timeZone, names)),
