@@ -7,7 +7,6 @@ const firstName = z.string().trim().min(1, 'Please fill this in.').max(40);
 const initial = z
   .string()
   .trim()
-  .max(1, 'One letter.')
   .regex(/^\p{L}?$/u, 'One letter.')
   .transform((letter) => letter.toUpperCase());
 
