@@ -1,4 +1,4 @@
-export const NAV_GROUPS = ['Before', 'On the day', 'After'] as const;
+export const NAV_GROUPS = ['Site', 'Before', 'On the day', 'After'] as const;
 export type NavGroup = (typeof NAV_GROUPS)[number];
 
 /** A screen in the navigation. */

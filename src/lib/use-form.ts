@@ -1,0 +1,103 @@
+import { useRef, useState, type FormEvent, type RefObject } from 'react';
+import { flushSync } from 'react-dom';
+import type { FieldProblem } from '../../shared/contracts/errors';
+import { ApiError } from './api';
+import { useSend, type Wish } from './use-send';
+
+/** What a form was told: by its own look at the fields, or by the server. */
+interface Told {
+  error: unknown;
+  fields: readonly FieldProblem[];
+}
+
+const NOTHING: Told = { error: null, fields: [] };
+
+export interface Form {
+  ref: RefObject<HTMLFormElement | null>;
+  onSubmit: (event: FormEvent) => void;
+  /** The words for a field, by its dotted path; undefined when it is right. */
+  problem: (path: string) => string | undefined;
+  busy: boolean;
+  /** A refusal that belongs to no field. */
+  error: unknown;
+  /** Problems of fields that this form does not show. */
+  unplaced: readonly string[];
+  /** Forget what was told. */
+  clear: () => void;
+}
+
+/**
+ * A form: every problem at once beside its field, the focus on the first wrong one, nothing sent twice, nothing typed lost.
+ * @param request what to send, or the problems that keep it from being sent
+ * @param onDone what to do with the answer
+ */
+export function useForm<R = unknown>({
+  request,
+  onDone,
+}: {
+  request: () => Wish | { problems: readonly FieldProblem[] };
+  onDone?: (reply: R) => unknown;
+}): Form {
+  const ref = useRef<HTMLFormElement>(null);
+  const sending = useRef(false);
+  const [told, setTold] = useState<Told>(NOTHING);
+  const [unplaced, setUnplaced] = useState<readonly string[]>([]);
+  const change = useSend<R>(onDone);
+
+  const tell = (next: Told) => {
+    // The words have to stand on the page before the focus can go to the field they belong to.
+    flushSync(() => {
+      setTold(next);
+      setUnplaced([]);
+    });
+    setUnplaced(next.fields.map(({ message }) => message).filter((words) => !isShown(words)));
+    firstWrong(ref.current)?.focus();
+  };
+
+  const submit = async () => {
+    if (sending.current) return;
+    const wish = request();
+    if ('problems' in wish) {
+      tell({ error: null, fields: wish.problems });
+      return;
+    }
+    sending.current = true;
+    try {
+      await change.mutateAsync(wish);
+      setTold(NOTHING);
+      setUnplaced([]);
+    } catch (error) {
+      tell({ error, fields: error instanceof ApiError ? error.fields : [] });
+    } finally {
+      sending.current = false;
+    }
+  };
+
+  return {
+    ref,
+    onSubmit: (event) => {
+      event.preventDefault();
+      void submit();
+    },
+    problem: (path) => told.fields.find((field) => field.path === path)?.message,
+    busy: change.isPending,
+    error: told.fields.length === 0 ? told.error : null,
+    unplaced,
+    clear: () => {
+      setTold(NOTHING);
+      setUnplaced([]);
+    },
+  };
+}
+
+const isShown = (words: string): boolean =>
+  [...document.querySelectorAll('.field-error')].some((element) => element.textContent.includes(words));
+
+/** The first wrong field of a form, those outside that belong to it included. */
+function firstWrong(form: HTMLFormElement | null): HTMLElement | undefined {
+  if (!form) return undefined;
+  return [...form.elements].find(
+    (element): element is HTMLElement =>
+      element instanceof HTMLElement && element.getAttribute('aria-invalid') === 'true',
+  );
+}
