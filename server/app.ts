@@ -12,7 +12,7 @@ import { newId } from '../shared/kernel/ids';
 import type { Config } from './config';
 import { openDataSources } from './db/data-sources';
 import { sessionSecret } from './db/session-secret';
-import { SessionStore } from './db/session-store';
+import { SessionStore } from './http/session-store';
 import { UnitOfWork } from './db/unit-of-work';
 import { Writer } from './db/write';
 import type { Deps } from './deps';
@@ -48,7 +48,7 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
   const principals = new Principals(data.readHandle);
   const sessions = new SessionStore(unitOfWork, data.readHandle, clock);
   const live: { hub?: Hub; publisher?: Publisher } = {};
-  let wakeMail = () => undefined as void;
+  let wakeMail: () => void = () => undefined;
   const writer = new Writer({
     unitOfWork,
     clock,

@@ -30,7 +30,7 @@ const schema = z
     LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
   })
   .refine((env) => (env.TLS_CERT === undefined) === (env.TLS_KEY === undefined), {
-    message: 'TLS_CERT and TLS_KEY go together: give both or none.',
+    error: 'TLS_CERT and TLS_KEY go together: give both or none.',
     path: ['TLS_CERT'],
   });
 

@@ -2,7 +2,7 @@ import type { Logger } from 'pino';
 import type { Clock } from '../shared/kernel/clock';
 import type { Config } from './config';
 import type { DataSources } from './db/data-sources';
-import type { SessionStore } from './db/session-store';
+import type { SessionStore } from './http/session-store';
 import type { UnitOfWork } from './db/unit-of-work';
 import type { Writer } from './db/write';
 import type { Principals } from './http/principal';

@@ -27,7 +27,7 @@ export const principalOf = (req: Request): Principal | null => (req.user as Prin
 /** Put every declared route on a router, each with the same gates in the same order. */
 export function mountRoutes(router: Router, routes: readonly AnyRoute[], deps: MountDeps): void {
   for (const declared of routes) {
-    const spec = declared as unknown as RouteSpec<unknown, unknown>;
+    const spec = declared as unknown as RouteSpec;
     const handlers: RequestHandler[] = [];
     if (spec.method !== 'get')
       handlers.push(deps.csrf, express.json({ limit: spec.bodyLimit ?? DEFAULT_BODY_LIMIT }));
@@ -39,7 +39,7 @@ export function mountRoutes(router: Router, routes: readonly AnyRoute[], deps: M
 }
 
 async function serve(
-  spec: RouteSpec<unknown, unknown>,
+  spec: RouteSpec,
   deps: MountDeps,
   req: Request,
   res: Response,
@@ -124,7 +124,7 @@ const KEY_FORM = /^[\w-]{8,100}$/;
 
 function keyOf(
   req: Request,
-  spec: RouteSpec<unknown, unknown>,
+  spec: RouteSpec,
   params: Record<string, string>,
   body: unknown,
 ): Idempotency {

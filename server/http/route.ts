@@ -23,7 +23,7 @@ export interface RouteRequest<B, Q> {
    * Run a use case under the request's key and answer with what it returns.
    * @param madeId the installation that this very use case makes; otherwise it is the path's
    */
-  write(work: (scope: WriteScope) => Promise<unknown>, status?: number, madeId?: string): Promise<Reply>;
+  write: (work: (scope: WriteScope) => Promise<unknown>, status?: number, madeId?: string) => Promise<Reply>;
   req: Request;
   res: Response;
 }

@@ -3,7 +3,7 @@ import type { Request, RequestHandler } from 'express';
 import session from 'express-session';
 import passport from 'passport';
 import type { Clock } from '../../shared/kernel/clock';
-import type { SessionStore } from '../db/session-store';
+import type { SessionStore } from './session-store';
 import { principalKey, type Principal, type Principals } from './principal';
 
 const DAY_MS = 24 * 3600_000;

@@ -5,7 +5,7 @@ import { openMail } from './mail.job';
 /** The server's own work beside requests. */
 export interface Jobs {
   /** Send queued letters now. */
-  wakeMail(): void;
+  wakeMail: () => void;
   stop(): Promise<void>;
 }
 

@@ -6,7 +6,7 @@ export const PASSWORD_MIN = 15;
 export const PASSWORD_MAX = 256;
 
 /** Characters as people count them: Unicode code points, each one character (NIST SP 800-63B-4, 3.1.1.2). */
-const characters = (text: string) => [...text].length;
+const characters = (text: string) => Array.from(text).length;
 /** A code point takes up to two units of a string's length. */
 const TYPED_MAX = PASSWORD_MAX * 2;
 

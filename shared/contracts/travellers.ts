@@ -19,7 +19,7 @@ export const clocksSchema = z
     hangFrom: seconds.optional(),
   })
   .refine((clocks) => clocks.recoatUntil === undefined || clocks.recoatUntil > (clocks.recoatFrom ?? 0), {
-    message: 'The recoat window ends after it begins.',
+    error: 'The recoat window ends after it begins.',
     path: ['recoatUntil'],
   });
 
@@ -38,7 +38,7 @@ export const templateStepSchema = z
     needsCheck: z.boolean(),
   })
   .refine((step) => step.crewMax >= step.crewMin, {
-    message: 'The most crew is at least the least crew.',
+    error: 'The most crew is at least the least crew.',
     path: ['crewMax'],
   });
 export type TemplateStep = z.infer<typeof templateStepSchema>;

@@ -16,7 +16,7 @@ const systemRandomBytes: RandomBytes = (length) => globalThis.crypto.getRandomVa
  */
 export function newId(bytes: RandomBytes = systemRandomBytes): string {
   let id = '';
-  for (const byte of bytes(26)) id += ALPHABET[byte & 31];
+  for (const byte of bytes(26)) id += ALPHABET.charAt(byte & 31);
   return id;
 }
 
@@ -31,7 +31,8 @@ export function newSayableCode(length: number, bytes: RandomBytes = systemRandom
   let code = '';
   while (code.length < length) {
     for (const byte of bytes(length)) {
-      if (byte < limit && code.length < length) code += SAYABLE_CHARACTERS[byte % SAYABLE_CHARACTERS.length];
+      if (byte < limit && code.length < length)
+        code += SAYABLE_CHARACTERS.charAt(byte % SAYABLE_CHARACTERS.length);
     }
   }
   return code;

@@ -89,7 +89,7 @@ class LiveConnection {
     const since = this.state()?.cursor ?? null;
     this.socket
       .timeout(8000)
-      .emit('watch', { installationId: this.installationId, since }, (failed, answer) => {
+      .emit('watch', { installationId: this.installationId, since }, (failed: Error | null, answer) => {
         if (failed) {
           this.socket.disconnect().connect();
           return;

@@ -1,35 +1,14 @@
-import { useEffect, useRef } from 'react';
-import {
-  createBrowserRouter,
-  Navigate,
-  Outlet,
-  useLocation,
-  type LazyRouteFunction,
-  type RouteObject,
-} from 'react-router-dom';
+import { createBrowserRouter, Navigate, type LazyRouteFunction, type RouteObject } from 'react-router-dom';
 import { Pending } from '../components/ui/pending';
 import { membershipIn, useSession } from '../lib/session';
-import { RouteProblem } from './error-boundary';
+import { RouteError } from './error-boundary';
 import { InstallationLayout, type PageHandle } from './installation-layout';
-import { NotFound } from './routes/not-found';
+import { PageChange } from './page-change';
+import { Component as NotFound } from './routes/not-found';
 
 type Lazy = LazyRouteFunction<RouteObject>;
 
 const page = (path: string, lazy: Lazy, handle: PageHandle = {}): RouteObject => ({ path, lazy, handle });
-
-/** Takes a reader to the new page's head when the page changes, as loading it would. */
-function Pages() {
-  const { pathname } = useLocation();
-  const shown = useRef(pathname);
-  useEffect(() => {
-    if (shown.current === pathname) return;
-    shown.current = pathname;
-    window.scrollTo(0, 0);
-    const head = document.querySelector<HTMLElement>('h1[tabindex]') ?? document.getElementById('main');
-    head?.focus({ preventScroll: true });
-  }, [pathname]);
-  return <Outlet />;
-}
 
 /** Where somebody belongs who opens the bare address. */
 function Home() {
@@ -54,8 +33,8 @@ function Home() {
 
 export const router = createBrowserRouter([
   {
-    Component: Pages,
-    ErrorBoundary: RouteProblem,
+    Component: PageChange,
+    ErrorBoundary: RouteError,
     HydrateFallback: () => null,
     children: [
       { path: '/', element: <Home /> },
@@ -99,9 +78,7 @@ export const router = createBrowserRouter([
         ],
       },
       // The gallery of components, for whoever works on them.
-      ...(import.meta.env.DEV
-        ? [page('/kit', async () => ({ Component: (await import('./routes/kit')).Kit }))]
-        : []),
+      ...(import.meta.env.DEV ? [page('/kit', () => import('./routes/kit'))] : []),
       { path: '*', Component: NotFound },
     ],
   },

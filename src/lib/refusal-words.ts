@@ -1,5 +1,4 @@
 import type { StepRecord } from '../../shared/contracts/live';
-import type { Hazard } from '../../shared/safety';
 import type { AgeActivity } from '../../shared/safety/age-rules';
 import { formatTime } from './formats';
 import type { Messages } from './messages';
@@ -19,7 +18,7 @@ export interface RefusalContext {
   what: string;
   step: Pick<StepRecord, 'state' | 'dryUntil' | 'held'>;
   /** First name and initial of a person, or a word for somebody. */
-  nameOf(personId: string): string;
+  nameOf: (personId: string) => string;
 }
 
 const text = (value: unknown): string => (typeof value === 'string' ? value : '');
@@ -76,7 +75,7 @@ export function refusalText(refusal: AnyRefusal, context: RefusalContext): strin
 const sentence = (words: string) => (/[.!?]$/.test(words) ? words : `${words}.`);
 
 function signOffText(details: Record<string, unknown>, { refusals, common }: Messages): string {
-  const hazard = common.hazards[details.hazard as Hazard] ?? '';
+  const hazard = (common.hazards as Partial<Record<string, string>>)[text(details.hazard)] ?? '';
   const says = (refusals.SIGN_OFF as Record<string, unknown>)[text(details.missing)];
   return typeof says === 'function'
     ? (says as (hazard: string) => string)(hazard)

@@ -8,6 +8,9 @@ export function setServerTime(serverMs: number, rate: number): void {
   heard = { serverMs, localMs: performance.now(), rate };
 }
 
+/** A moment by the phone's wall clock as the server's time; only how long ago it was is used. */
+export const serverTimeOf = (phoneMs: number): number => serverNow() - (Date.now() - phoneMs);
+
 /** The server's time now, ms UTC. */
 export const serverNow = (): number => heard.serverMs + (performance.now() - heard.localMs) * heard.rate;
 

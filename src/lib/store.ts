@@ -2,9 +2,9 @@ import { useSyncExternalStore } from 'react';
 
 /** A value outside React that components can read and follow. */
 export interface Store<T> {
-  get(): T;
-  set(next: T | ((now: T) => T)): void;
-  subscribe(listener: () => void): () => void;
+  get: () => T;
+  set: (next: T | ((now: T) => T)) => void;
+  subscribe: (listener: () => void) => () => void;
 }
 
 /** Make a store. */

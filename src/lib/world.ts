@@ -1,4 +1,4 @@
-import type { InstallationRecord, PersonRecord } from '../../shared/contracts/live';
+import type { InstallationRecord, PersonRecord, StepRecord } from '../../shared/contracts/live';
 import { tightenAgeRules } from '../../shared/safety/age-rules';
 import { DEFAULT_AGE_RULES, type AgeRules } from '../../shared/safety/age-table';
 import { hazardGate, missingByHazard } from '../../shared/safety/hazard-gate';
@@ -23,8 +23,8 @@ function derived<K extends object, V>(derive: (from: K) => V): (from: K) => V {
 }
 
 interface StepLists {
-  ofPiece: ReadonlyMap<string, readonly Step[]>;
-  dryingAt: ReadonlyMap<string, readonly Step[]>;
+  ofPiece: ReadonlyMap<string, readonly StepRecord[]>;
+  dryingAt: ReadonlyMap<string, readonly StepRecord[]>;
   inHand: ReadonlyMap<string, number>;
 }
 
@@ -36,8 +36,8 @@ function put<K, V>(lists: Map<K, V[]>, key: K, value: V): void {
 
 /** A collection keeps its identity until something in it changes, so a board of hundreds of rows sorts it once. */
 const listsOf = derived((steps: LiveMaps['steps']): StepLists => {
-  const ofPiece = new Map<string, Step[]>();
-  const dryingAt = new Map<string, Step[]>();
+  const ofPiece = new Map<string, StepRecord[]>();
+  const dryingAt = new Map<string, StepRecord[]>();
   const inHand = new Map<string, number>();
   for (const step of steps.values()) {
     if (step.removed) continue;
@@ -60,8 +60,10 @@ const ageRulesOf = derived((installation: InstallationRecord): AgeRules => {
 });
 
 /** The steps of a traveller in order of position; what was taken out of the plan is left out. */
-export const travellerSteps = ({ records }: Records, subAssemblyId: string): readonly Step[] =>
-  listsOf(records.steps).ofPiece.get(subAssemblyId) ?? [];
+export const travellerSteps = (steps: LiveMaps['steps'], subAssemblyId: string): readonly StepRecord[] =>
+  listsOf(steps).ofPiece.get(subAssemblyId) ?? NO_STEPS;
+
+const NO_STEPS: readonly StepRecord[] = [];
 
 /** What a person lacks may end by the mere passing of time: a minute is close enough for a screen. */
 const MISSING_MS = 60_000;

@@ -55,7 +55,7 @@ function store(next: readonly QueuedWrite[]): void {
 }
 
 // Another tab of the same phone queued or sent something.
-globalThis.addEventListener?.('storage', (event) => {
+window.addEventListener('storage', (event) => {
   if (event.key === STORAGE) queue.set(load());
 });
 

@@ -132,7 +132,7 @@ describe('claimStep', () => {
         }
       }),
     );
-    await kill;
+    await (kill as Promise<void> | null);
     expect(acknowledged.length).toBeGreaterThanOrEqual(400);
     expect(unanswered.length).toBeGreaterThan(0);
     server = await startChild('server/main.ts', { ...benchEnv(file), PORT: port });

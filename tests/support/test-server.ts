@@ -11,6 +11,8 @@ const CACHE = path.resolve('node_modules/.cache/strutbee-tests');
 /** 12 June 2027, 10:00 in Lisbon: the test installation's build day has begun. */
 export const TEST_NOW = Date.UTC(2027, 5, 12, 9, 0);
 
+type CookieJar = ReturnType<typeof supertest.agent>['jar'];
+
 let base: Promise<string> | undefined;
 
 /** A migrated, empty database, made once for each test file and copied for each server. */
@@ -99,8 +101,8 @@ export class TestClient {
 
   /** The cookie header, for a socket of the same browser. */
   cookie(): string {
-    const jar = this.agent.jar.getCookies({ domain: '127.0.0.1', path: '/', script: false, secure: false });
-    return jar.toValueString();
+    const access: unknown = { domain: '127.0.0.1', path: '/', script: false, secure: false };
+    return this.agent.jar.getCookies(access as Parameters<CookieJar['getCookies']>[0]).toValueString();
   }
 
   /** Take over a session that was made elsewhere, as `signedInClient` of the fixtures does. */
@@ -155,7 +157,7 @@ function toReply<T>(reply: supertest.Response): TestReply<T> {
     status: reply.status,
     data: body.data as T,
     error: body.error,
-    headers: reply.headers as Record<string, string>,
+    headers: reply.headers,
     text: reply.text,
   };
 }

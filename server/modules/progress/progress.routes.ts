@@ -28,7 +28,7 @@ export const progressRoutes = (deps: Deps): AnyRoute[] => [
     method: 'get',
     path: '/installations/:installationId/day-log',
     action: 'day-log.read',
-    query: dayLogQuerySchema as z.ZodType<DayLogQuery>,
+    query: dayLogQuerySchema,
     handle: ({ installationId, query }) => {
       const rows: DayLogView[] = readDayLog(deps.data.readHandle, installationId, query);
       return { data: rows, meta: { more: rows.length === query.limit } };

@@ -1,8 +1,8 @@
 import type { Refusal, Step } from '../../../shared/travellers';
-import { HAZARD_LABELS, type Hazard } from '../../../shared/safety';
+import { HAZARD_LABELS } from '../../../shared/safety';
 
 const hazardOf = (details: Record<string, unknown>) =>
-  HAZARD_LABELS[details.hazard as Hazard] ?? 'this hazard';
+  (HAZARD_LABELS as Partial<Record<string, string>>)[String(details.hazard)] ?? 'this hazard';
 
 /** A count as it stands in the details of a refusal. */
 const count = (value: unknown) => (typeof value === 'number' ? String(value) : '?');

@@ -41,7 +41,7 @@ export interface RawClaim {
   ended_at: number | null;
 }
 
-const parsed = <T>(json: string | null): T | null => (json === null ? null : (JSON.parse(json) as T));
+const parsed = (json: string | null): unknown => (json === null ? null : JSON.parse(json));
 
 /**
  * A step as the rules see it.
@@ -61,10 +61,10 @@ export function toStep(row: RawStep, claims: readonly RawClaim[]): Step {
     crewMin: row.crew_min,
     crewMax: row.crew_max,
     plannedSeconds: row.planned_seconds,
-    clocks: parsed(row.clocks),
+    clocks: parsed(row.clocks) as Step['clocks'],
     needsCheck: row.needs_check === 1,
     state: row.state,
-    held: parsed(row.held),
+    held: parsed(row.held) as Step['held'],
     crew: claims
       .filter((claim) => claim.ended_at === null)
       .map((claim) => ({ personId: claim.person_id, claimedAt: claim.claimed_at })),
@@ -75,8 +75,8 @@ export function toStep(row: RawStep, claims: readonly RawClaim[]): Step {
     dryUntil: row.dry_until,
     passedAt: row.passed_at,
     passedBy: row.passed_by,
-    rework: parsed(row.rework),
-    handOver: parsed(row.hand_over),
+    rework: parsed(row.rework) as Step['rework'],
+    handOver: parsed(row.hand_over) as Step['handOver'],
     flags: JSON.parse(row.flags) as string[],
   };
 }

@@ -5,7 +5,7 @@ import { StateGlyph } from '../../components/ui/strut-glyph';
 import { formatTime } from '../../lib/formats';
 import { link } from '../../lib/live';
 import { useMessages } from '../../lib/messages';
-import { serverNow } from '../../lib/server-clock';
+import { serverTimeOf } from '../../lib/server-clock';
 import { useStore } from '../../lib/store';
 import { dropQueued, outcomes, queue, readOutcome, type QueuedWrite } from '../../lib/write-queue';
 import type { BenchNames } from './names';
@@ -103,7 +103,7 @@ function WaitingRow({ write, names }: { write: QueuedWrite; names: BenchNames })
     start: words.start,
     finish: words.finished,
   };
-  const at = formatTime(serverNow() - (Date.now() - write.at), names.zone);
+  const at = formatTime(serverTimeOf(write.at), names.zone);
   return (
     <li className="border-b border-rule py-4">
       <h3>{words.offline.waitingStep(commandWords[write.command], names.codeOf(step), step.name, at)}</h3>

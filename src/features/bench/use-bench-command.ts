@@ -12,10 +12,10 @@ export type Outcome =
   | { kind: 'refused'; title: string; text: string; stepId: string };
 
 export interface BenchCommand {
-  run(step: StepRecord, command: QueuedCommand): void;
-  busyWith(stepId: string): boolean;
+  run: (step: StepRecord, command: QueuedCommand) => void;
+  busyWith: (stepId: string) => boolean;
   outcome: Outcome | null;
-  clear(): void;
+  clear: () => void;
 }
 
 /** The commands of My bench: sent or queued, and what came of them in words. */

@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import type Database from 'better-sqlite3';
 import session, { type SessionData } from 'express-session';
 import type { Clock } from '../../shared/kernel/clock';
-import type { UnitOfWork } from './unit-of-work';
+import type { UnitOfWork } from '../db/unit-of-work';
 
 /** Writes a moved expiry only when it moved this far: express-session touches on every request. */
 const TOUCH_STEP_MS = 600_000;
