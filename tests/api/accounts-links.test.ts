@@ -192,6 +192,15 @@ describe('resets', () => {
     expect((await accept(secret)).error?.code).toBe('LINK_SPENT');
   });
 
+  it('reset > two browsers use the link at once > one is signed in, the other is told that it is spent', async () => {
+    await seedAccount(server, 'mara@hall.example');
+    await ask('mara@hall.example');
+    const [letter] = await letters(server, 1);
+    const secret = secretIn(letter?.text ?? '');
+    const replies = await Promise.all([accept(secret), accept(secret)]);
+    expect(replies.map((reply) => reply.status).sort()).toEqual([200, 410]);
+  });
+
   it('reset > an hour later > LINK_SPENT, the old password stays', async () => {
     await seedAccount(server, 'mara@hall.example');
     await ask('mara@hall.example');
