@@ -27,7 +27,7 @@ export const allRoutes = (deps: Deps, layer: SessionLayer): AnyRoute[] => [
   ...peopleRoutes(deps, layer),
   ...safetyRoutes(deps),
   ...framesRoutes(deps),
-  ...cribRoutes(deps),
+  ...cribRoutes(),
   ...travellersRoutes(deps),
   ...progressRoutes(deps),
   ...mailRoutes(deps),

@@ -14,6 +14,7 @@ export const labelHalf = (text: string, fontPx: number): { w: number; h: number 
   h: (HEIGHT_EM * fontPx) / 2,
 });
 
+/** The box of a label of half size `half` (px) round its centre. */
 export const boxAround = ({ x, y }: Place, half: { w: number; h: number }): Box => ({
   left: x - half.w,
   top: y - half.h,
@@ -47,7 +48,10 @@ export class PageContent {
   private readonly lines = new Map<string, Segment[]>();
   private readonly boxes = new Map<string, Box[]>();
 
-  /** @param page the paper: labels outside it cannot be read */
+  /**
+   * An empty page.
+   * @param page the paper: labels outside it cannot be read
+   */
   constructor(private readonly page: Box) {}
 
   private *cells(box: Box): Generator<string> {

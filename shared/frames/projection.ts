@@ -41,6 +41,7 @@ const ISOMETRIC = oblique('isometric', 45, (Math.atan(Math.SQRT1_2) * 180) / Mat
 const ELEVATIONS = [22, 27, 17, 33, 12, 39];
 const AZIMUTHS = [28, 21, 34, 15, 39, 25, 31, 11, 18, 37, 43, 8];
 
+/** A point (mm) as a camera sees it: right, up and towards the eye, mm. */
 export const project = (point: Vector, { right, up, towards }: Camera): Projected => ({
   x: dot(point, right),
   y: dot(point, up),

@@ -3,12 +3,14 @@ export type Vector = { x: number; y: number; z: number };
 
 export const add = (a: Vector, b: Vector): Vector => ({ x: a.x + b.x, y: a.y + b.y, z: a.z + b.z });
 export const subtract = (a: Vector, b: Vector): Vector => ({ x: a.x - b.x, y: a.y - b.y, z: a.z - b.z });
+/** A vector times a number. */
 export const scale = (a: Vector, factor: number): Vector => ({
   x: a.x * factor,
   y: a.y * factor,
   z: a.z * factor,
 });
 export const dot = (a: Vector, b: Vector): number => a.x * b.x + a.y * b.y + a.z * b.z;
+/** Cross product, right-handed. */
 export const cross = (a: Vector, b: Vector): Vector => ({
   x: a.y * b.z - a.z * b.y,
   y: a.z * b.x - a.x * b.z,

@@ -1,7 +1,2 @@
-import type { AnyLiveSource } from '../../realtime/live-source';
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-
-export const cribRoutes = (_deps: Deps): AnyRoute[] => [];
-
-export const cribLive: AnyLiveSource[] = [];
+export { cribLive } from './crib.live';
+export { cribRoutes } from './crib.routes';

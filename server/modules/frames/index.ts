@@ -1,4 +1,2 @@
-import type { Deps } from '../../deps';
-import type { AnyRoute } from '../../http/route';
-
-export const framesRoutes = (_deps: Deps): AnyRoute[] => [];
+export { framesRoutes } from './frames.routes';
+export { loadFrame } from './frames.repository';

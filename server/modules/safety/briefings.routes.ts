@@ -41,7 +41,7 @@ export const briefingsRoutes = (deps: Deps): AnyRoute[] => [
     method: 'get',
     path: BRIEFING,
     action: 'briefing.read',
-    query: briefingQuerySchema as z.ZodType<BriefingQuery>,
+    query: briefingQuerySchema,
     handle: ({ installationId, params, query }) => {
       const now = deps.clock.now();
       const text = readBriefingText(deps.data.readHandle, installationId, keyOf(params), query.version, now);

@@ -1,12 +1,14 @@
 import type { Deps } from '../../deps';
 import type { AnyRoute } from '../../http/route';
 import type { AnyLiveSource } from '../../realtime/live-source';
+import { subAssembliesSource } from './planning.live';
+import { planningRoutes } from './planning.routes';
 import { stepsSource } from './steps.live';
 import { stepsRoutes } from './steps.routes';
 
 export { endDueDrying } from './drying.job';
-export { commandStep, ageRulesOf, releasePlaces } from './steps.service';
+export { ageRulesOf, releasePlaces } from './steps.service';
 
-export const travellersRoutes = (_deps: Deps): AnyRoute[] => [...stepsRoutes()];
+export const travellersRoutes = (deps: Deps): AnyRoute[] => [...planningRoutes(deps), ...stepsRoutes()];
 
-export const travellersLive: AnyLiveSource[] = [stepsSource];
+export const travellersLive: AnyLiveSource[] = [subAssembliesSource, stepsSource];

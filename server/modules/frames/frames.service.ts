@@ -1,0 +1,122 @@
+import type { CreateFrame } from '../../../shared/contracts/frames';
+import { buildShape, parseObj, type Frame as Geometry, type ObjNote } from '../../../shared/frames';
+import { newId } from '../../../shared/kernel/ids';
+import type { WriteScope } from '../../db/write';
+import { AppError, notFound } from '../../http/app-error';
+import { assertOpen } from '../installations';
+import { Frame } from './frame.entity';
+import { loadFrame, usesOfFrame } from './frames.repository';
+
+interface Built {
+  source: Frame['source'];
+  geometry: Geometry;
+  notes: ObjNote[];
+}
+
+/** Geometry from what was typed or read; every fault of a file is named with its line. */
+function build(input: CreateFrame): Built {
+  if (input.kind === 'shape') {
+    return { source: { kind: 'shape', shape: input.shape }, geometry: buildShape(input.shape), notes: [] };
+  }
+  const read = parseObj(input.text);
+  if (!read.ok) {
+    const count = read.refusal.length;
+    throw new AppError(
+      'OBJ_INVALID',
+      `${input.fileName} was not read: ${count === 1 ? 'one line is' : `${count} lines are`} wrong.`,
+      {
+        fields: read.refusal.map(({ code, message }) => ({ path: 'text', code, message })),
+      },
+    );
+  }
+  return {
+    source: { kind: 'obj', fileName: input.fileName },
+    geometry: read.value.frame,
+    notes: read.value.notes,
+  };
+}
+
+/**
+ * Add a frame from a shape's measures or a Wavefront OBJ file.
+ * @throws AppError OBJ_INVALID with every fault of the file by line
+ */
+export async function createFrame(
+  scope: WriteScope,
+  installationId: string,
+  input: CreateFrame,
+  id = newId(),
+): Promise<{ id: string; notes: ObjNote[] }> {
+  await assertOpen(scope, installationId);
+  const { source, geometry, notes } = build(input);
+  await scope.manager.insert(Frame, {
+    id,
+    installationId,
+    name: input.name,
+    source,
+    geometry,
+    revision: await scope.revision(),
+    removedAt: null,
+  });
+  await scope.log({ action: 'frame.added', subject: { frameId: id, kind: input.kind } });
+  return { id, notes };
+}
+
+/**
+ * Change a frame's name, measures or file.
+ * @throws AppError IN_USE when its geometry would change under pieces on which work has begun
+ */
+export async function editFrame(
+  scope: WriteScope,
+  installationId: string,
+  id: string,
+  input: CreateFrame,
+): Promise<{ id: string; notes: ObjNote[] }> {
+  await assertOpen(scope, installationId);
+  const known = await loadFrame(scope.manager, installationId, id);
+  if (!known) throw notFound();
+  const { source, geometry, notes } = build(input);
+  const changed = JSON.stringify(geometry) !== JSON.stringify(known.geometry);
+  const { begun } = changed ? await usesOfFrame(scope.manager, id) : { begun: 0 };
+  if (begun > 0) {
+    throw new AppError(
+      'IN_USE',
+      `Work has begun on ${begun} pieces of this frame, so its shape stays. Make a new frame beside it.`,
+      {
+        details: { begun },
+      },
+    );
+  }
+  const revision = await scope.revision();
+  await scope.manager.update(Frame, { id }, { name: input.name, source, geometry, revision });
+  // Pieces are drawn from their frame: their screens fetch it again.
+  await scope.manager.query('UPDATE sub_assembly SET revision = ? WHERE frame_id = ?', [revision, id]);
+  const pieces = await scope.manager.query<{ id: string }[]>(
+    'SELECT id FROM sub_assembly WHERE frame_id = ?',
+    [id],
+  );
+  for (const piece of pieces) scope.changed('subAssemblies', piece.id);
+  await scope.log({ action: 'frame.edited', subject: { frameId: id } });
+  return { id, notes };
+}
+
+/**
+ * Take a frame out of the plan.
+ * @throws AppError IN_USE while pieces are made from it
+ */
+export async function removeFrame(
+  scope: WriteScope,
+  installationId: string,
+  id: string,
+): Promise<{ id: string }> {
+  await assertOpen(scope, installationId);
+  if (!(await loadFrame(scope.manager, installationId, id))) throw notFound();
+  const { pieces } = await usesOfFrame(scope.manager, id);
+  if (pieces > 0) {
+    throw new AppError('IN_USE', `${pieces} pieces are made from this frame. Remove them first.`, {
+      details: { pieces },
+    });
+  }
+  await scope.manager.update(Frame, { id }, { removedAt: scope.now, revision: await scope.revision() });
+  await scope.log({ action: 'frame.removed', subject: { frameId: id } });
+  return { id };
+}

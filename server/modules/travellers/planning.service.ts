@@ -1,0 +1,217 @@
+import type { z } from 'zod';
+import type {
+  createSubAssembliesSchema,
+  TemplateStep,
+  templateSchema,
+  TemplateView,
+} from '../../../shared/contracts/travellers';
+import { cutCount, jointCount } from '../../../shared/frames';
+import { newId } from '../../../shared/kernel/ids';
+import { plannedSeconds } from '../../../shared/travellers';
+import type { WriteScope } from '../../db/write';
+import { AppError, fieldError, notFound } from '../../http/app-error';
+import { loadFrame } from '../frames';
+import { assertOpen } from '../installations';
+import { claimsOn, highestNumber, loadPiece, loadTemplate, stationIds } from './planning.repository';
+import { StepRow, SubAssembly, TravellerTemplate } from './traveller.entity';
+
+type TemplateInput = z.infer<typeof templateSchema>;
+type PiecesInput = z.infer<typeof createSubAssembliesSchema>;
+
+/** SQLite takes 32,766 values in one statement; a step has 24. */
+const STEPS_AT_ONCE = 200;
+
+async function guardStations(
+  scope: WriteScope,
+  installationId: string,
+  steps: readonly TemplateStep[],
+): Promise<void> {
+  const known = await stationIds(scope.manager, installationId);
+  const fields = steps.flatMap((step, index) =>
+    known.has(step.stationId)
+      ? []
+      : [
+          {
+            path: `steps.${index}.stationId`,
+            code: 'unknown',
+            message: 'This station is not there any more. Choose another one.',
+          },
+        ],
+  );
+  if (fields.length > 0) throw new AppError('VALIDATION', 'A step has no station.', { fields });
+}
+
+/**
+ * Make a template, or change one. Travellers made from it before keep their steps.
+ * @param id of the template to change; null for a new one
+ * @throws AppError STALE_PAGE when somebody changed it since the form was filled, VALIDATION for a station that is gone
+ */
+export async function saveTemplate(
+  scope: WriteScope,
+  installationId: string,
+  id: string | null,
+  input: TemplateInput,
+): Promise<{ id: string; revision: number }> {
+  await assertOpen(scope, installationId);
+  await guardStations(scope, installationId, input.steps);
+  const known = id === null ? null : await loadTemplate(scope.manager, installationId, id);
+  if (id !== null && !known) throw notFound();
+  if (known && input.revision !== known.revision) throw staleTemplate(known);
+  const revision = await scope.revision();
+  const templateId = known?.id ?? newId();
+  const fields = { name: input.name, steps: input.steps, revision };
+  if (known) await scope.manager.update(TravellerTemplate, { id: templateId }, fields);
+  else await scope.manager.insert(TravellerTemplate, { id: templateId, installationId, ...fields });
+  await scope.log({ action: known ? 'template.edited' : 'template.added', subject: { templateId } });
+  return { id: templateId, revision };
+}
+
+const staleTemplate = (known: TemplateView) =>
+  new AppError(
+    'STALE_PAGE',
+    `Somebody changed the template ${known.name} meanwhile. Load it again; yours was not saved.`,
+    {
+      details: { revision: known.revision },
+    },
+  );
+
+/** Remove a template; travellers made from it stay as they are. */
+export async function removeTemplate(
+  scope: WriteScope,
+  installationId: string,
+  id: string,
+): Promise<{ id: string }> {
+  await assertOpen(scope, installationId);
+  if (!(await loadTemplate(scope.manager, installationId, id))) throw notFound();
+  await scope.manager.delete(TravellerTemplate, { id });
+  await scope.log({ action: 'template.removed', subject: { templateId: id } });
+  return { id };
+}
+
+/**
+ * Make pieces from a frame, each with a traveller from a template; codes go on from the highest of the letter.
+ * @returns ids and codes in order
+ * @throws AppError VALIDATION when frame or template is gone
+ */
+export async function createSubAssemblies(
+  scope: WriteScope,
+  installationId: string,
+  input: PiecesInput,
+): Promise<{ ids: string[]; codes: string[] }> {
+  await assertOpen(scope, installationId);
+  const frame = await loadFrame(scope.manager, installationId, input.frameId);
+  if (!frame) throw fieldError('frameId', 'unknown', 'This frame is not there any more. Choose another one.');
+  const template = await loadTemplate(scope.manager, installationId, input.templateId);
+  if (!template)
+    throw fieldError('templateId', 'unknown', 'This template is not there any more. Choose another one.');
+  await guardStations(scope, installationId, template.steps);
+  const revision = await scope.revision();
+  const from = await highestNumber(scope.manager, installationId, input.letter);
+  const pieces = Array.from({ length: input.quantity }, (_, index) => ({
+    id: newId(),
+    installationId,
+    frameId: frame.id,
+    templateId: template.id,
+    code: `${input.letter}-${String(from + index + 1).padStart(2, '0')}`,
+    name: input.quantity > 1 ? `${input.name} ${index + 1}` : input.name,
+    position: from + index + 1,
+    travellerRevision: 1,
+    revision,
+    removedAt: null,
+  }));
+  const counts = { cuts: cutCount(frame.geometry), joints: jointCount(frame.geometry) };
+  const steps = pieces.flatMap((piece) =>
+    template.steps.map((step, index) => stepRow(step, index, piece, counts)),
+  );
+  await scope.manager.insert(SubAssembly, pieces);
+  for (let at = 0; at < steps.length; at += STEPS_AT_ONCE) {
+    await scope.manager.insert(StepRow, steps.slice(at, at + STEPS_AT_ONCE));
+  }
+  for (const piece of pieces) scope.changed('subAssemblies', piece.id);
+  for (const step of steps) scope.changed('steps', step.id);
+  const ids = pieces.map((piece) => piece.id);
+  await scope.log({
+    action: 'sub-assembly.added',
+    subject: { ids, frameId: frame.id, templateId: template.id },
+  });
+  return { ids, codes: pieces.map((piece) => piece.code) };
+}
+
+function stepRow(
+  { minutes, needsCheck, ...step }: TemplateStep,
+  index: number,
+  piece: { id: string; installationId: string; revision: number },
+  counts: { cuts: number; joints: number },
+) {
+  return {
+    id: newId(),
+    installationId: piece.installationId,
+    subAssemblyId: piece.id,
+    position: index + 1,
+    ...step,
+    plannedSeconds: plannedSeconds(minutes, counts),
+    needsCheck: needsCheck ? 1 : 0,
+    state: index === 0 ? ('ready' as const) : ('waiting' as const),
+    held: null,
+    startedAt: null,
+    finishedAt: null,
+    finishedBy: null,
+    dryUntil: null,
+    passedAt: null,
+    passedBy: null,
+    rework: null,
+    handOver: null,
+    flags: [],
+    revision: piece.revision,
+    removedAt: null,
+  };
+}
+
+/** Give a piece another name; its code stays. */
+export async function renameSubAssembly(
+  scope: WriteScope,
+  installationId: string,
+  id: string,
+  name: string,
+): Promise<{ id: string }> {
+  await assertOpen(scope, installationId);
+  if (!(await loadPiece(scope.manager, installationId, id))) throw notFound();
+  await scope.manager.update(SubAssembly, { id }, { name, revision: await scope.revision() });
+  scope.changed('subAssemblies', id);
+  await scope.log({ action: 'sub-assembly.renamed', subject: { subAssemblyId: id } });
+  return { id };
+}
+
+/**
+ * Take a piece out of the plan with its traveller.
+ * @throws AppError IN_USE when somebody ever worked on it
+ */
+export async function removeSubAssembly(
+  scope: WriteScope,
+  installationId: string,
+  id: string,
+): Promise<{ id: string }> {
+  await assertOpen(scope, installationId);
+  const piece = await loadPiece(scope.manager, installationId, id);
+  if (!piece) throw notFound();
+  const claims = await claimsOn(scope.manager, id);
+  if (claims > 0) {
+    throw new AppError(
+      'IN_USE',
+      `${piece.code} was worked on: ${claims} places were taken on its steps. It stays; hold it if it is not wanted.`,
+      {
+        details: { claims },
+      },
+    );
+  }
+  const revision = await scope.revision();
+  await scope.manager.update(SubAssembly, { id }, { removedAt: scope.now, revision });
+  const steps = await scope.manager.query<{ id: string }[]>(
+    'UPDATE step SET removed_at = ?, revision = ? WHERE sub_assembly_id = ? RETURNING id',
+    [scope.now, revision, id],
+  );
+  scope.changed('subAssemblies', id);
+  for (const step of steps) scope.changed('steps', step.id);
+  await scope.log({ action: 'sub-assembly.removed', subject: { subAssemblyId: id } });
+  return { id };
+}
