@@ -129,6 +129,7 @@ class Player {
     steps: readonly StepRecord[],
     crews: ReadonlyMap<string, ReadonlySet<string>>,
   ): StepRecord[] {
+    const { workers } = this.morning;
     const size = (step: StepRecord) => crews.get(step.id)?.size ?? 0;
     const gluing = steps.filter(
       (step) => step.state === 'in hand' && step.hazards.includes('hot-glue'),
@@ -143,12 +144,16 @@ class Player {
         (step.state === 'in hand' && size(step) < step.crewMin)
       );
     });
+    // Half of the people begin the longest chain, the other half finish what is nearly done: so the hall looks at two.
+    const finisher = workers.indexOf(worker) % 2 === 1;
     const weight = (step: StepRecord) =>
       (step.state === 'in hand' ? 1e9 : 0) +
-      chainBehind(
-        steps.filter((other) => other.subAssemblyId === step.subAssemblyId),
-        step,
-      ).seconds;
+      (finisher
+        ? step.position
+        : chainBehind(
+            steps.filter((other) => other.subAssemblyId === step.subAssemblyId),
+            step,
+          ).seconds);
     return open.sort((a, b) => weight(b) - weight(a)).slice(0, 3);
   }
 
