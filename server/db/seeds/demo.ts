@@ -246,7 +246,8 @@ class Seeder {
     await tag('K-03', 'One foot is missing.');
     const snapshot = await client.get<Snapshot>(this.path('/live'));
     const checked = snapshot.records.steps.filter(
-      (step) => step.state === 'in hand' && step.needsCheck && step.startedAt !== null,
+      (step) =>
+        step.state === 'in hand' && step.needsCheck && step.clocks === null && step.startedAt !== null,
     );
     for (const [index, step] of checked.entries()) {
       const crew = this.people().find((person) => person.personId === step.crew[0]?.personId);
