@@ -1,0 +1,24 @@
+import { useQuery, useQueryClient } from '@tanstack/react-query';
+import type { FrameView } from '../../../shared/contracts/frames';
+import { get } from '../../lib/api';
+import { framesKey } from '../../lib/frames';
+import { useLive } from '../../lib/live';
+
+/** Frames of an installation by name; fetched again whenever pieces or frames may have changed. */
+export function useFrameList(installationId: string) {
+  const pieces = useLive(installationId, (state) => state.records.subAssemblies.size) ?? 0;
+  return useQuery({
+    queryKey: [...framesKey(installationId), 'list', pieces],
+    queryFn: async () => {
+      const frames = await get<FrameView[]>(`/installations/${installationId}/frames`);
+      return frames.sort((a, b) => a.name.localeCompare(b.name));
+    },
+    placeholderData: (before) => before,
+  });
+}
+
+/** Fetches frames again after one was made or changed, here and wherever else they are drawn. */
+export function useReloadFrames(installationId: string) {
+  const client = useQueryClient();
+  return () => client.invalidateQueries({ queryKey: framesKey(installationId) });
+}
