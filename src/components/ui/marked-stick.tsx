@@ -1,5 +1,5 @@
 import type { ShownState } from '../../../shared/travellers/step';
-import { STATE_COLOUR, stickLabel, stickParts } from './strut-geometry';
+import { joinedParts, STATE_COLOUR, stickLabel, stickParts } from './strut-geometry';
 import { Part } from './strut-glyph';
 
 export type StickStep = { name: string; state: ShownState; share?: number };
@@ -39,7 +39,7 @@ export function MarkedStick({
       role="img"
       aria-label={label ?? stickLabel(code, steps)}
     >
-      {parts.map((part, i) => (
+      {joinedParts(parts).map((part, i) => (
         <Part key={i} part={part} colour={STATE_COLOUR[part.state]} />
       ))}
     </svg>

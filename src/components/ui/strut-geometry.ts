@@ -206,6 +206,25 @@ export function stickParts(
   return { width: pad * 2 + lengths.length * pitch, parts };
 }
 
+/**
+ * The same drawing in fewer parts: lines of one state and width become one path, so that a board of hundreds of sticks
+ * stays light. Joints lie on top, in their order.
+ */
+export function joinedParts(parts: readonly ColouredPart[]): ColouredPart[] {
+  const paths = new Map<string, ColouredPart & StrutPath>();
+  const circles: ColouredPart[] = [];
+  for (const part of parts) {
+    if (part.kind === 'circle') {
+      circles.push(part);
+      continue;
+    }
+    const key = `${part.state} ${part.width} ${part.round ?? ''}`;
+    const known = paths.get(key);
+    paths.set(key, known ? { ...known, d: known.d + part.d } : part);
+  }
+  return [...paths.values(), ...circles];
+}
+
 /** The words of a marked stick: how many passed, what is worked on, how many wait. */
 export function stickLabel(code: string, steps: readonly { name: string; state: ShownState }[]): string {
   const count = (state: ShownState): number => steps.filter((step) => step.state === state).length;
