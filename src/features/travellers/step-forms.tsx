@@ -92,17 +92,17 @@ export function StepForm({ deed, step, traveller, path, people, onClose }: StepF
     minutes: deed === 'still-wet' ? '20' : '0',
     crew: new Set(),
   });
-  const form = useForm({
+  const { ref, onSubmit, problem, busy, error, unplaced } = useForm({
     request: () => ({ method: 'POST', path: `${path}/${deed}`, body: bodyOf(deed, values) }),
     onDone: onClose,
   });
   const set = (change: Partial<Values>) => setValues((now) => ({ ...now, ...change }));
   return (
-    <form ref={form.ref} className="step-form" noValidate onSubmit={form.onSubmit}>
-      <Refusal error={form.error} unplaced={form.unplaced} />
-      <DeedFields deed={deed} {...{ step, traveller, people, values, set }} problem={form.problem} />
+    <form ref={ref} className="step-form" noValidate onSubmit={onSubmit}>
+      <Refusal error={error} unplaced={unplaced} />
+      <DeedFields deed={deed} {...{ step, traveller, people, values, set }} problem={problem} />
       <div className="flex flex-wrap items-center gap-4">
-        <Action type="submit" look="main" busy={form.busy}>
+        <Action type="submit" look="main" busy={busy}>
           {SEND_WORDS[deed]}
         </Action>
         <Action look="words" onClick={onClose}>
