@@ -1,6 +1,7 @@
+import type { SessionView } from '../../shared/contracts/live';
 import { createBrowserRouter, Navigate, type LazyRouteFunction, type RouteObject } from 'react-router-dom';
 import { Pending } from '../components/ui/pending';
-import { membershipIn, useSession } from '../lib/session';
+import { useSession } from '../lib/session';
 import { RouteError } from './error-boundary';
 import { InstallationLayout, type PageHandle } from './installation-layout';
 import { PageChange } from './page-change';
@@ -13,22 +14,19 @@ const page = (path: string, lazy: Lazy, handle: PageHandle = {}): RouteObject =>
 /** Where somebody belongs who opens the bare address. */
 function Home() {
   const session = useSession();
+  const { key } = useLocation();
   if (session.isPending) return <Pending />;
-  const principal = session.data?.principal;
-  if (!principal) return <Navigate to="/sign-in" replace />;
-  if (principal.kind === 'display') return <Navigate to="/projector" replace />;
-  if (principal.kind === 'account') return <Navigate to="/installations" replace />;
+  // A second way to this address, while the first still loads, has to lead on again.
+  return <Navigate key={key} to={homeOf(session.data)} replace />;
+}
+
+function homeOf(session: SessionView | undefined): string {
+  const principal = session?.principal;
+  if (!principal) return '/sign-in';
+  if (principal.kind === 'display') return '/projector';
+  if (principal.kind === 'account') return '/installations';
   const [place] = principal.installations;
-  return (
-    <Navigate
-      to={
-        place && membershipIn(session.data, place.installationId)
-          ? `/i/${place.installationId}/bench`
-          : '/join'
-      }
-      replace
-    />
-  );
+  return place ? `/i/${place.installationId}/bench` : '/join';
 }
 
 export const router = createBrowserRouter([
