@@ -1,5 +1,11 @@
 import type { SessionView } from '../../shared/contracts/live';
-import { createBrowserRouter, Navigate, type LazyRouteFunction, type RouteObject } from 'react-router-dom';
+import {
+  createBrowserRouter,
+  Navigate,
+  useLocation,
+  type LazyRouteFunction,
+  type RouteObject,
+} from 'react-router-dom';
 import { Pending } from '../components/ui/pending';
 import { useSession } from '../lib/session';
 import { RouteError } from './error-boundary';
