@@ -154,7 +154,14 @@ export function DrawnFrame({ drawing, ...props }: DrawnProps & { drawing: FlatDr
       ))}
       {withStruts &&
         drawing.lines.map(({ strut, label }) => (
-          <text key={strut} x={label.x} y={label.y} fontSize={LABEL_PX} className="drawn-number">
+          <text
+            key={strut}
+            x={label.x}
+            y={label.y}
+            fontSize={LABEL_PX}
+            className="drawn-number"
+            data-of={withJoints ? 'strut' : undefined}
+          >
             {strut}
           </text>
         ))}

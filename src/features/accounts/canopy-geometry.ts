@@ -31,7 +31,7 @@ function lantern(at: Joint, radius: number): Frame {
 /** Two rows of lanterns hung under the vault at uneven heights, the same on every visit. */
 const LANTERNS: readonly Joint[] = Array.from({ length: 14 }, (_, i) => ({
   x: i % 2 === 0 ? -430 : 420,
-  y: 300 + i * 470,
+  y: 620 + i * 440,
   z: 260 + ((i * 37) % 5) * 52,
 }));
 
@@ -77,7 +77,7 @@ export function canopyLines(width: number): { lines: DrawnLine[]; height: number
     widthMm: WIDTH_MM,
     riseMm: RISE_MM,
     divisionsAlong: 2,
-    divisionsAcross: 8,
+    divisionsAcross: 12,
     diagonals: 'staggered',
   });
   const raw: (Omit<DrawnLine, 'near'> & { depth: number })[] = [];

@@ -34,6 +34,12 @@ export function FramePreview({ frame, unit, name }: { frame: Frame; unit: Length
         <ChoiceRow label="numbers" choices={NUMBERS} value={numbers} onChange={setChosen} />
       </div>
       <UnrolledDrawing frame={frame} unit={unit} view={view} numbers={numbers} label={name || 'The frame'} />
+      {numbers === 'both' && (
+        <p className="text-small text-pencil">
+          <strong className="text-ink">Dark</strong> numbers are joints,{' '}
+          <span className="font-light">light</span> ones are struts.
+        </p>
+      )}
       <FrameFigures frame={frame} unit={unit} />
     </div>
   );

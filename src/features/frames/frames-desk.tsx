@@ -48,7 +48,7 @@ export function FramesDesk({
     <div className="frames-desk">
       <div className="grid content-start gap-4">
         {mayEdit && (
-          <div className="flex flex-wrap gap-x-4 gap-y-1">
+          <div className="flex flex-wrap gap-x-2 gap-y-1">
             <Action to={`${page}?new=shape`}>A new shape</Action>
             <Action to={`${page}?new=file`}>From a file</Action>
           </div>

@@ -36,7 +36,7 @@ function choicesOf(rule: AgeRule, now: string, unit: LengthUnit): Choice[] {
     .sort((a, b) => b - a)
     .map((mm) => ({
       value: String(mm),
-      words: mm === 0 ? 'under 18: no ladder at all' : `under 18: up to ${formatLength(mm, unit)}`,
+      words: mm === 0 ? 'under 18: no ladder at all' : `under 18: ${formatLength(mm, unit)}`,
     }));
 }
 
@@ -84,7 +84,9 @@ export function AgeRulesSection({
             return (
               <tr key={rule.key}>
                 <th scope="row">
-                  <span className="whitespace-normal">{capital(rule.subject)}</span>
+                  <span className="block whitespace-normal text-small font-medium desk:w-32">
+                    {capital(rule.subject)}
+                  </span>
                 </th>
                 <td>
                   <SelectField

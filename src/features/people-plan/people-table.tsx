@@ -196,7 +196,7 @@ function PersonRow({
       <td>
         <span className="flex flex-wrap gap-x-4 desk:justify-end">
           {!closed && !isSelf && <TakeOut person={person} path={path} installationId={installationId} />}
-          <Erase person={person} path={path} installationId={installationId} />
+          {!isSelf && <Erase person={person} path={path} installationId={installationId} />}
         </span>
       </td>
     </tr>

@@ -1,0 +1,98 @@
+/** What each entry of the day log says was done; whoever did it stands before it. */
+const ACTIONS: Readonly<Record<string, string>> = {
+  'installation.created': 'started the installation',
+  'installation.edited': 'changed the installation',
+  'installation.published': 'published',
+  'installation.closed': 'closed the installation',
+  'installation.code-renewed': 'made a new join code',
+  'build-day.added': 'added a build day',
+  'build-day.edited': 'changed a build day',
+  'build-day.removed': 'took out a build day',
+  'station.added': 'added a station',
+  'station.edited': 'changed a station',
+  'station.removed': 'took out a station',
+  'display.added': 'made an address for a projector',
+  'display.closed': 'closed a projector',
+  'frame.added': 'added a frame',
+  'frame.edited': 'changed a frame',
+  'frame.removed': 'took out a frame',
+  'template.added': 'added a template',
+  'template.edited': 'changed a template',
+  'template.removed': 'took out a template',
+  'sub-assembly.added': 'made pieces',
+  'sub-assembly.renamed': 'renamed a piece',
+  'sub-assembly.removed': 'took out a piece',
+  'person.added': 'added somebody as',
+  'person.joined': 'joined',
+  'person.corrected': 'joined again with other answers',
+  'person.confirmed': 'confirmed',
+  'person.signed-out': 'signed out',
+  'person.left': 'left',
+  'person.duty-given': 'gave a duty',
+  'person.duty-taken': 'took a duty away',
+  'person.removed': 'took out',
+  'person.erased': 'erased',
+  'briefing.answered': 'answered the question sheet',
+  'briefing.signed': 'signed a briefing',
+  'briefing.talked': 'talked a briefing through',
+  'briefing.countersigned': 'countersigned',
+  'briefing.revoked': 'revoked a sign-off',
+  'briefing.proposed': 'proposed a correction',
+  'briefing.proposal-withdrawn': 'withdrew a proposal',
+  'briefing.changed': 'changed a briefing',
+  'briefing.corrected': 'corrected a briefing',
+  'step.claimed': 'claimed',
+  'step.given-back': 'gave back',
+  'step.offered': 'offered to hand over',
+  'step.offer-withdrawn': 'withdrew the offer of',
+  'step.offer-declined': 'declined',
+  'step.handed-over': 'took over',
+  'step.started': 'started',
+  'step.finished': 'finished',
+  'step.recorded': 'recorded from paper',
+  'step.still-wet': 'found still wet',
+  'step.dried': 'saw the drying end of',
+  'step.drying-ended-early': 'ended the drying early of',
+  'step.passed': 'passed',
+  'step.sent-to-rework': 'sent to rework',
+  'step.held': 'held',
+  'step.released': 'released',
+  'tool.added': 'added a tool',
+  'tool.edited': 'changed a tool',
+  'tool.removed': 'took out a tool',
+  'tool.lent': 'lent',
+  'tool.taken-back': 'took back',
+  'tool.tagged': 'tagged out of use',
+  'tool.tag-cleared': 'cleared the tag of',
+  'stop.raised': 'raised a stop',
+  'stop.seen': 'saw the stop',
+  'stop.lifted': 'lifted the stop',
+};
+
+/** Actions by their area, for the filter. */
+export const ACTION_GROUPS: readonly { area: string; actions: readonly string[] }[] = [
+  ...new Set(Object.keys(ACTIONS).map((action) => action.split('.')[0] ?? '')),
+].map((area) => ({
+  area: area.replaceAll('-', ' '),
+  actions: Object.keys(ACTIONS).filter((action) => action.startsWith(`${area}.`)),
+}));
+
+/** What was done, in words; a kind of entry that is newer than this list is named as it is stored. */
+export const actionWords = (action: string): string =>
+  ACTIONS[action] ?? action.replace('.', ' ').replaceAll('-', ' ');
+
+const FLAGS: Readonly<Record<string, string>> = {
+  RECORDED_FROM_PAPER: 'typed in from paper',
+  SIGN_OFF_MISSING: 'without a valid sign-off',
+  AGE_RULE: 'against an age rule',
+  STOP_ACTIVE: 'while a stop was on',
+  STEP_HELD: 'while it was held',
+  STEP_NOT_READY: 'before its turn',
+  STEP_CLOCK_RUNNING: 'before its clock had run out',
+  STEP_CREW_FULL: 'with more crew than it has places',
+  STEP_CREW_TOO_SMALL: 'with less crew than it needs',
+  PERSON_NOT_CONFIRMED: 'by somebody the desk had not confirmed',
+};
+
+/** A rule that an accepted entry broke, in words. */
+export const flagWords = (flag: string): string => FLAGS[flag] ?? flag.toLowerCase().replaceAll('_', ' ');
