@@ -33,7 +33,7 @@ export function ProjectorFrame(props: ProjectorFrameProps) {
         <header className="wall-head">
           {/* The name stays for those who do not see the picture when old news takes its place. */}
           <h1 className={stale === undefined ? undefined : 'sr-only'}>
-            {title}, <strong>{time}</strong>
+            <span className="wall-title">{title}</span>, <strong>{time}</strong>
           </h1>
           {stale !== undefined && (
             <p className="wall-stale" role="status">
