@@ -60,7 +60,10 @@ const checkouts: LiveSource<'checkouts'> = {
       backAt: row.back_at,
       conditionBack: row.condition_back,
     })),
-  view: (record, audience) => (audience === 'door' ? null : record),
+  view: (record, audience) => {
+    if (audience === 'door') return null;
+    return audience === 'projector' ? { ...record, conditionBack: null } : record;
+  },
 };
 
 export const cribLive: AnyLiveSource[] = [tools, checkouts];

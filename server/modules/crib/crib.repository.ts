@@ -72,6 +72,24 @@ export async function openCheckout(
     : null;
 }
 
+/**
+ * Write a tool back on condition that it is out.
+ * @returns the checkout that ended, or null when there was none
+ */
+export async function closeCheckout(
+  manager: EntityManager,
+  toolId: string,
+  back: { at: number; by: string; condition: string | null; revision: number },
+): Promise<{ id: string; personId: string; backBy: number } | null> {
+  const rows = await manager.query<{ id: string; person_id: string; back_by: number }[]>(
+    `UPDATE checkout SET back_at = ?, taken_back_by = ?, condition_back = ?, revision = ?
+     WHERE tool_id = ? AND back_at IS NULL RETURNING id, person_id, back_by`,
+    [back.at, back.by, back.condition, back.revision, toolId],
+  );
+  const [row] = rows;
+  return row ? { id: row.id, personId: row.person_id, backBy: row.back_by } : null;
+}
+
 /** Who asks for a tool. */
 export async function loadBorrower(
   manager: EntityManager,

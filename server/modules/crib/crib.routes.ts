@@ -63,8 +63,10 @@ export const cribRoutes = (): AnyRoute[] => [
     path: `${TOOL}/take-back`,
     action: 'tool.take-back',
     body: takeBackSchema,
-    handle: ({ installationId, params, body, actor, write }) =>
-      write((scope) => takeBackTool(scope, installationId, actor.personId, params.toolId ?? '', body)),
+    handle: ({ installationId, params, body, actor, write }) => {
+      const taker = named(actor);
+      return write((scope) => takeBackTool(scope, installationId, taker, params.toolId ?? '', body));
+    },
   }),
   route<z.infer<typeof tagSchema>>({
     method: 'post',

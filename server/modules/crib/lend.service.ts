@@ -1,8 +1,8 @@
 import type { Lend, TakeBack } from '../../../shared/contracts/crib';
 import type { InstallationRecord } from '../../../shared/contracts/live';
-import { decideLend, type LendRefusal } from '../../../shared/crib';
+import { decideLend } from '../../../shared/crib';
 import { newId } from '../../../shared/kernel/ids';
-import { ageRefusalText, HAZARD_LABELS, type AgeRefusal, type Hazard } from '../../../shared/safety';
+import type { AgeLimit } from '../../../shared/safety';
 import type { WriteScope } from '../../db/write';
 import { AppError, fieldError, notFound } from '../../http/app-error';
 import { assertOpen } from '../installations';
@@ -10,18 +10,21 @@ import { activeStops, missingSignOffs } from '../safety';
 import { ageRulesOf } from '../travellers';
 import { Checkout, Tool } from './crib.entity';
 import {
+  closeCheckout,
   hasStation,
   loadBorrower,
   loadHolder,
   loadTool,
   openCheckout,
-  type LoadedTool,
 } from './crib.repository';
+import { lendWords } from './lend-words';
 
 /** What the keeper is told when a tool goes out. */
 export interface LendOutcome {
   checkoutId: string;
   backBy: number;
+  /** To be said when handing it over to somebody under 18. */
+  limits: readonly AgeLimit[];
 }
 
 /**
@@ -57,12 +60,9 @@ export async function lendTool(
   });
   if (!decision.ok) {
     const { code, details } = decision.refusal;
-    const tagBy = tool.tag ? ((await loadHolder(manager, tool.tag.by))?.name ?? 'somebody') : '';
-    throw new AppError(
-      code,
-      lendWords(decision.refusal, tool, person.name, { holder: out?.name ?? '', tagBy }),
-      { details },
-    );
+    const tagger = tool.tag ? ((await loadHolder(manager, tool.tag.by))?.name ?? 'somebody') : '';
+    const names = { borrower: person.name, holder: out?.name ?? '', tagger };
+    throw new AppError(code, lendWords(decision.refusal, tool, names, now), { details: { ...details } });
   }
   const id = newId();
   const backBy = now + input.minutes * 60_000;
@@ -87,80 +87,49 @@ export async function lendTool(
     subject: { toolId, checkoutId: id, personId: input.personId, stationId: input.stationId, backBy },
     forPersonId: input.personId,
   });
-  return { checkoutId: id, backBy };
-}
-
-function lendWords(
-  { code, details }: LendRefusal,
-  tool: LoadedTool,
-  person: string,
-  names: { holder: string; tagBy: string },
-): string {
-  const what = `${tool.number} ${tool.name}`;
-  switch (code) {
-    case 'TOOL_OUT':
-      return `${what} is out already, with ${names.holder}. Take it back first, or lend another one.`;
-    case 'TOOL_OUT_OF_USE':
-      return `${what} is tagged out of use by ${names.tagBy}: ${tool.tag?.reason ?? ''} Lend another one.`;
-    case 'PERSON_NOT_CONFIRMED':
-      return `The muster desk has not confirmed ${person} yet. Send them there first.`;
-    case 'PERSON_NOT_ON_SITE':
-      return `${person} is signed out for today. Send them to the muster desk first.`;
-    case 'STOP_ACTIVE':
-      return `A stop covers ${what}. It stays in the crib until a safety lead lifts the stop.`;
-    case 'AGE_RULE':
-      return `Not for ${person}. ${ageRefusalText({ verdict: 'refused', subject: '', ...details } as unknown as AgeRefusal, tool.name)}`;
-    case 'SIGN_OFF_MISSING':
-      return `${person} has no valid ${HAZARD_LABELS[details.hazard as Hazard]} sign-off. They read the briefing, answer and sign on their phone, and a safety lead countersigns.`;
-  }
+  return { checkoutId: id, backBy, limits: decision.value.limits };
 }
 
 /**
  * Take a tool back: always possible, also under a stop, in a closed installation, and from somebody who has left.
- * @param input its condition, and a reason to tag it out of use at once
+ * @param takerId who takes it back
+ * @param input its condition, and a reason to tag it out of use at once. A tag that hangs there already stays its author's;
+ *   what is found then is kept as the tool's condition.
+ * @throws AppError TOOL_NOT_OUT
  */
 export async function takeBackTool(
   scope: WriteScope,
   installationId: string,
-  takerId: string | null,
+  takerId: string,
   toolId: string,
   input: TakeBack,
 ): Promise<{ checkoutId: string }> {
   const { manager, now } = scope;
   const tool = await loadTool(manager, installationId, toolId);
   if (!tool) throw notFound();
-  const out = await openCheckout(manager, toolId);
-  if (!out) {
+  const found = tool.tag === null ? [input.condition] : [input.condition, input.tagReason ?? ''];
+  const condition = found.filter((words) => words !== '').join('; ');
+  const revision = await scope.revision();
+  const back = { at: now, by: takerId, condition: condition || null, revision };
+  const closed = await closeCheckout(manager, toolId, back);
+  if (!closed) {
     throw new AppError(
       'TOOL_NOT_OUT',
       `${tool.number} ${tool.name} is in the crib by our list. Look at the number again.`,
     );
   }
-  const revision = await scope.revision();
-  await manager.update(
-    Checkout,
-    { id: out.id },
-    { backAt: now, takenBackBy: takerId, conditionBack: input.condition || null, revision },
-  );
-  scope.changed('checkouts', out.id);
-  const tag =
-    input.tagReason === null || takerId === null
-      ? tool.tag
-      : { reason: input.tagReason, by: takerId, at: now };
-  if (input.condition !== '' || tag !== tool.tag) {
-    await manager.update(
-      Tool,
-      { id: toolId },
-      { condition: input.condition || tool.condition, tag, revision },
-    );
+  scope.changed('checkouts', closed.id);
+  const tagged = input.tagReason !== null && tool.tag === null;
+  if (condition !== '' || tagged) {
+    const tag = tagged ? { reason: input.tagReason ?? '', by: takerId, at: now } : tool.tag;
+    await manager.update(Tool, { id: toolId }, { condition: condition || tool.condition, tag, revision });
     scope.changed('tools', toolId);
   }
   await scope.log({
     action: 'tool.taken-back',
-    subject: { toolId, checkoutId: out.id, personId: out.personId, late: now > out.backBy },
-    forPersonId: out.personId,
+    subject: { toolId, checkoutId: closed.id, personId: closed.personId, late: now > closed.backBy },
+    forPersonId: closed.personId,
   });
-  if (tag !== tool.tag)
-    await scope.log({ action: 'tool.tagged', subject: { toolId, reason: input.tagReason } });
-  return { checkoutId: out.id };
+  if (tagged) await scope.log({ action: 'tool.tagged', subject: { toolId, reason: input.tagReason } });
+  return { checkoutId: closed.id };
 }

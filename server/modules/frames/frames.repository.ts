@@ -55,3 +55,22 @@ export async function usesOfFrame(
   );
   return rows[0] ?? { pieces: 0, begun: 0 };
 }
+
+/**
+ * Give every piece of a frame a new revision.
+ * @param redrawn its geometry changed: a printed traveller is out of date, so the traveller's own revision goes up too
+ * @returns ids of the pieces
+ */
+export async function touchPieces(
+  manager: EntityManager,
+  frameId: string,
+  revision: number,
+  redrawn: boolean,
+): Promise<string[]> {
+  const rows = await manager.query<{ id: string }[]>(
+    `UPDATE sub_assembly SET revision = ?, traveller_revision = traveller_revision + ?
+     WHERE frame_id = ? AND removed_at IS NULL RETURNING id`,
+    [revision, redrawn ? 1 : 0, frameId],
+  );
+  return rows.map((row) => row.id);
+}

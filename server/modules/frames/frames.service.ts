@@ -1,11 +1,18 @@
 import type { CreateFrame } from '../../../shared/contracts/frames';
-import { buildShape, parseObj, type Frame as Geometry, type ObjNote } from '../../../shared/frames';
+import {
+  buildShape,
+  cutCount,
+  jointCount,
+  parseObj,
+  type Frame as Geometry,
+  type ObjNote,
+} from '../../../shared/frames';
 import { newId } from '../../../shared/kernel/ids';
 import type { WriteScope } from '../../db/write';
 import { AppError, notFound } from '../../http/app-error';
 import { assertOpen } from '../installations';
 import { Frame } from './frame.entity';
-import { loadFrame, usesOfFrame } from './frames.repository';
+import { loadFrame, touchPieces, usesOfFrame } from './frames.repository';
 
 interface Built {
   source: Frame['source'];
@@ -61,8 +68,19 @@ export async function createFrame(
   return { id, notes };
 }
 
+/** What an organiser is told of a changed frame. */
+export interface EditedFrame {
+  id: string;
+  notes: ObjNote[];
+  /** Pieces whose travellers show the new drawing, under their next revision. */
+  pieces: number;
+  /** Cuts or joints are others, so the planned minutes of those pieces are still the old frame's. */
+  minutesStay: boolean;
+}
+
 /**
- * Change a frame's name, measures or file.
+ * Change a frame's name, measures or file. Where its geometry changes, the travellers of its pieces get their next
+ * revision, since a printed one shows another drawing; their planned minutes stay as they were planned.
  * @throws AppError IN_USE when its geometry would change under pieces on which work has begun
  */
 export async function editFrame(
@@ -70,7 +88,7 @@ export async function editFrame(
   installationId: string,
   id: string,
   input: CreateFrame,
-): Promise<{ id: string; notes: ObjNote[] }> {
+): Promise<EditedFrame> {
   await assertOpen(scope, installationId);
   const known = await loadFrame(scope.manager, installationId, id);
   if (!known) throw notFound();
@@ -80,24 +98,23 @@ export async function editFrame(
   if (begun > 0) {
     throw new AppError(
       'IN_USE',
-      `Work has begun on ${begun} pieces of this frame, so its shape stays. Make a new frame beside it.`,
-      {
-        details: { begun },
-      },
+      `Work has begun on ${counted(begun)} of this frame, so its shape stays. Make a new frame beside it.`,
+      { details: { begun } },
     );
   }
   const revision = await scope.revision();
   await scope.manager.update(Frame, { id }, { name: input.name, source, geometry, revision });
   // Pieces are drawn from their frame: their screens fetch it again.
-  await scope.manager.query('UPDATE sub_assembly SET revision = ? WHERE frame_id = ?', [revision, id]);
-  const pieces = await scope.manager.query<{ id: string }[]>(
-    'SELECT id FROM sub_assembly WHERE frame_id = ?',
-    [id],
-  );
-  for (const piece of pieces) scope.changed('subAssemblies', piece.id);
-  await scope.log({ action: 'frame.edited', subject: { frameId: id } });
-  return { id, notes };
+  const pieces = await touchPieces(scope.manager, id, revision, changed);
+  for (const pieceId of pieces) scope.changed('subAssemblies', pieceId);
+  await scope.log({ action: 'frame.edited', subject: { frameId: id, geometry: changed } });
+  const minutesStay =
+    pieces.length > 0 &&
+    (cutCount(geometry) !== cutCount(known.geometry) || jointCount(geometry) !== jointCount(known.geometry));
+  return { id, notes, pieces: changed ? pieces.length : 0, minutesStay };
 }
+
+const counted = (pieces: number) => `${pieces} ${pieces === 1 ? 'piece' : 'pieces'}`;
 
 /**
  * Take a frame out of the plan.
@@ -112,9 +129,13 @@ export async function removeFrame(
   if (!(await loadFrame(scope.manager, installationId, id))) throw notFound();
   const { pieces } = await usesOfFrame(scope.manager, id);
   if (pieces > 0) {
-    throw new AppError('IN_USE', `${pieces} pieces are made from this frame. Remove them first.`, {
-      details: { pieces },
-    });
+    throw new AppError(
+      'IN_USE',
+      `${counted(pieces)} ${pieces === 1 ? 'is' : 'are'} made from this frame, so it stays. Take ${pieces === 1 ? 'it' : 'them'} out first.`,
+      {
+        details: { pieces },
+      },
+    );
   }
   await scope.manager.update(Frame, { id }, { removedAt: scope.now, revision: await scope.revision() });
   await scope.log({ action: 'frame.removed', subject: { frameId: id } });

@@ -39,6 +39,15 @@ export async function loadTemplate(
   return rows[0] ? toView(rows[0]) : null;
 }
 
+/** How many pieces were made from a template and not removed. */
+export async function piecesOf(manager: EntityManager, templateId: string): Promise<number> {
+  const rows = await manager.query<{ n: number }[]>(
+    'SELECT count(*) AS n FROM sub_assembly WHERE template_id = ? AND removed_at IS NULL',
+    [templateId],
+  );
+  return rows[0]?.n ?? 0;
+}
+
 /** Ids of an installation's stations that have not been removed. */
 export async function stationIds(manager: EntityManager, installationId: string): Promise<Set<string>> {
   const rows = await manager.query<{ id: string }[]>(

@@ -12,7 +12,14 @@ import type { WriteScope } from '../../db/write';
 import { AppError, fieldError, notFound } from '../../http/app-error';
 import { loadFrame } from '../frames';
 import { assertOpen } from '../installations';
-import { claimsOn, highestNumber, loadPiece, loadTemplate, stationIds } from './planning.repository';
+import {
+  claimsOn,
+  highestNumber,
+  loadPiece,
+  loadTemplate,
+  piecesOf,
+  stationIds,
+} from './planning.repository';
 import { StepRow, SubAssembly, TravellerTemplate } from './traveller.entity';
 
 type TemplateInput = z.infer<typeof templateSchema>;
@@ -20,6 +27,8 @@ type PiecesInput = z.infer<typeof createSubAssembliesSchema>;
 
 /** SQLite takes 32,766 values in one statement; a step has 24. */
 const STEPS_AT_ONCE = 200;
+/** A code that is read aloud has at most three figures. */
+const HIGHEST_NUMBER = 999;
 
 async function guardStations(
   scope: WriteScope,
@@ -41,6 +50,15 @@ async function guardStations(
   if (fields.length > 0) throw new AppError('VALIDATION', 'A step has no station.', { fields });
 }
 
+/** What an organiser is told of a template that was kept. */
+export interface SavedTemplate {
+  id: string;
+  revision: number;
+  /** Pieces whose travellers were made from it before and keep their steps. */
+  travellers: number;
+  note: string;
+}
+
 /**
  * Make a template, or change one. Travellers made from it before keep their steps.
  * @param id of the template to change; null for a new one
@@ -51,7 +69,7 @@ export async function saveTemplate(
   installationId: string,
   id: string | null,
   input: TemplateInput,
-): Promise<{ id: string; revision: number }> {
+): Promise<SavedTemplate> {
   await assertOpen(scope, installationId);
   await guardStations(scope, installationId, input.steps);
   const known = id === null ? null : await loadTemplate(scope.manager, installationId, id);
@@ -63,7 +81,14 @@ export async function saveTemplate(
   if (known) await scope.manager.update(TravellerTemplate, { id: templateId }, fields);
   else await scope.manager.insert(TravellerTemplate, { id: templateId, installationId, ...fields });
   await scope.log({ action: known ? 'template.edited' : 'template.added', subject: { templateId } });
-  return { id: templateId, revision };
+  const travellers = known ? await piecesOf(scope.manager, templateId) : 0;
+  return { id: templateId, revision, travellers, note: keptNote(travellers) };
+}
+
+function keptNote(travellers: number): string {
+  if (travellers === 0) return 'Kept. Pieces made from now on have these steps.';
+  const many = travellers > 1;
+  return `Kept. ${travellers} ${many ? 'travellers' : 'traveller'} made from it before ${many ? 'keep their' : 'keeps its'} steps; to change ${many ? 'them' : 'it'}, take ${many ? 'those pieces' : 'that piece'} out and make ${many ? 'them' : 'it'} again.`;
 }
 
 const staleTemplate = (known: TemplateView) =>
@@ -91,7 +116,7 @@ export async function removeTemplate(
 /**
  * Make pieces from a frame, each with a traveller from a template; codes go on from the highest of the letter.
  * @returns ids and codes in order
- * @throws AppError VALIDATION when frame or template is gone
+ * @throws AppError VALIDATION when frame or template is gone, or the letter has no codes left
  */
 export async function createSubAssemblies(
   scope: WriteScope,
@@ -107,6 +132,13 @@ export async function createSubAssemblies(
   await guardStations(scope, installationId, template.steps);
   const revision = await scope.revision();
   const from = await highestNumber(scope.manager, installationId, input.letter);
+  if (from + input.quantity > HIGHEST_NUMBER) {
+    throw fieldError(
+      'quantity',
+      'no-codes',
+      `${input.letter} has ${HIGHEST_NUMBER} codes and ${Math.max(0, HIGHEST_NUMBER - from)} left, not ${input.quantity}. Take another letter.`,
+    );
+  }
   const pieces = Array.from({ length: input.quantity }, (_, index) => ({
     id: newId(),
     installationId,
@@ -198,10 +230,8 @@ export async function removeSubAssembly(
   if (claims > 0) {
     throw new AppError(
       'IN_USE',
-      `${piece.code} was worked on: ${claims} places were taken on its steps. It stays; hold it if it is not wanted.`,
-      {
-        details: { claims },
-      },
+      `${piece.code} was worked on: ${claims} ${claims === 1 ? 'place was' : 'places were'} taken on its steps. It stays; hold it if it is not wanted.`,
+      { details: { claims } },
     );
   }
   const revision = await scope.revision();
