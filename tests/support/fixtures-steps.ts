@@ -10,6 +10,7 @@ export async function seedTraveller(
   stationId: string,
   steps: readonly Partial<StepRow>[],
   code = `V-${newId().slice(0, 4)}`,
+  piece: Partial<SubAssembly> = {},
 ): Promise<{ pieceId: string; stepIds: string[] }> {
   const pieceId = newId();
   const rows = steps.map((step, index) => ({
@@ -54,6 +55,7 @@ export async function seedTraveller(
       travellerRevision: 1,
       revision,
       removedAt: null,
+      ...piece,
     });
     for (const row of rows) {
       await scope.manager.insert(StepRow, { ...row, revision });

@@ -172,6 +172,7 @@ function TakeRow({
         <p className="text-pencil">{why(step, stepsBehind, first, words)}</p>
       </div>
       <Action
+        className="shrink-0"
         size="phone"
         look={first ? 'main' : 'crossed'}
         label={words.takeThis(code, step.name)}
