@@ -1,4 +1,4 @@
-import { useRef, useState, type FormEvent, type RefObject } from 'react';
+import { useRef, useState, type SyntheticEvent } from 'react';
 import { flushSync } from 'react-dom';
 import type { FieldProblem } from '../../shared/contracts/errors';
 import { ApiError } from './api';
@@ -13,8 +13,7 @@ interface Told {
 const NOTHING: Told = { error: null, fields: [] };
 
 export interface Form {
-  ref: RefObject<HTMLFormElement | null>;
-  onSubmit: (event: FormEvent) => void;
+  onSubmit: (event: SyntheticEvent<HTMLFormElement>) => void;
   /** The words for a field, by its dotted path; undefined when it is right. */
   problem: (path: string) => string | undefined;
   busy: boolean;
@@ -38,27 +37,26 @@ export function useForm<R = unknown>({
   request: () => Wish | { problems: readonly FieldProblem[] };
   onDone?: (reply: R) => unknown;
 }): Form {
-  const ref = useRef<HTMLFormElement>(null);
   const sending = useRef(false);
   const [told, setTold] = useState<Told>(NOTHING);
   const [unplaced, setUnplaced] = useState<readonly string[]>([]);
   const change = useSend<R>(onDone);
 
-  const tell = (next: Told) => {
+  const tell = (next: Told, form: HTMLFormElement) => {
     // The words have to stand on the page before the focus can go to the field they belong to.
     flushSync(() => {
       setTold(next);
       setUnplaced([]);
     });
     setUnplaced(next.fields.map(({ message }) => message).filter((words) => !isShown(words)));
-    firstWrong(ref.current)?.focus();
+    firstWrong(form)?.focus();
   };
 
-  const submit = async () => {
+  const submit = async (form: HTMLFormElement) => {
     if (sending.current) return;
     const wish = request();
     if ('problems' in wish) {
-      tell({ error: null, fields: wish.problems });
+      tell({ error: null, fields: wish.problems }, form);
       return;
     }
     sending.current = true;
@@ -67,17 +65,16 @@ export function useForm<R = unknown>({
       setTold(NOTHING);
       setUnplaced([]);
     } catch (error) {
-      tell({ error, fields: error instanceof ApiError ? error.fields : [] });
+      tell({ error, fields: error instanceof ApiError ? error.fields : [] }, form);
     } finally {
       sending.current = false;
     }
   };
 
   return {
-    ref,
     onSubmit: (event) => {
       event.preventDefault();
-      void submit();
+      void submit(event.currentTarget);
     },
     problem: (path) => told.fields.find((field) => field.path === path)?.message,
     busy: change.isPending,
@@ -94,8 +91,7 @@ const isShown = (words: string): boolean =>
   [...document.querySelectorAll('.field-error')].some((element) => element.textContent.includes(words));
 
 /** The first wrong field of a form, those outside that belong to it included. */
-function firstWrong(form: HTMLFormElement | null): HTMLElement | undefined {
-  if (!form) return undefined;
+function firstWrong(form: HTMLFormElement): HTMLElement | undefined {
   return [...form.elements].find(
     (element): element is HTMLElement =>
       element instanceof HTMLElement && element.getAttribute('aria-invalid') === 'true',

@@ -87,6 +87,21 @@ function sessionRoutes(deps: Deps, layer: SessionLayer): AnyRoute[] {
       unkeyed: true,
       handle: changePasswordHandler(deps),
     }),
+    route<z.infer<typeof nothingSchema>>({
+      method: 'post',
+      path: '/account/end-sessions',
+      action: 'account.change-password',
+      body: nothingSchema,
+      handle: async ({ req, principal, write }) => {
+        const { accountId } = accountOf(principal);
+        const reply = await write(async (scope) => {
+          await scope.log({ action: 'account.sessions-ended', subject: { accountId } });
+          return null;
+        });
+        await deps.endSessions(`account:${accountId}`, req.sessionID);
+        return reply;
+      },
+    }),
   ];
 }
 

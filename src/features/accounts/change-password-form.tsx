@@ -19,7 +19,7 @@ export function ChangePasswordForm({ email }: { email: string }) {
     },
   });
   return (
-    <form ref={form.ref} className="grid max-w-[26rem] gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid max-w-[26rem] gap-5" noValidate onSubmit={form.onSubmit}>
       {done && (
         <Note kind="done" title="Your password is changed.">
           Everywhere else you were signed out; here you stay in.

@@ -38,7 +38,7 @@ export function InviteForm({ roles }: { roles: readonly SiteRole[] }) {
     },
   });
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       {invited && (
         <Note kind="done" title={`${invited.name} is invited.`}>
           The letter to {invited.email} carries a link that works once, for 3 days. Invite again to send a new

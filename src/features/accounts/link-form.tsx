@@ -69,7 +69,7 @@ function LinkForm({ secret, link, onSignedIn }: { secret: string; link: LinkView
   const words = WORDS[link.kind];
   const spent = form.error instanceof ApiError && form.error.code === 'LINK_SPENT';
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       <p>{words.lead(link.email ?? '')}</p>
       <Refusal error={form.error} unplaced={form.unplaced} actions={spent ? <AskAgain /> : undefined} />
       {asksName && (

@@ -20,7 +20,7 @@ export function SignInForm({ onSignedIn }: { onSignedIn: () => void }) {
     },
   });
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} />
       <Field
         label="e-mail"

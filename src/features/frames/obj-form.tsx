@@ -83,7 +83,7 @@ export function ObjForm({ unit, wish, words, initial, onDone, onCancel }: ObjFor
   };
   return (
     <div className="grid gap-8">
-      <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+      <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
         <Refusal error={form.error} unplaced={form.unplaced} />
         {unread !== null && <Note kind="refused" title={unread} />}
         <div className="grid items-start gap-x-6 gap-y-5 sm:grid-cols-2">

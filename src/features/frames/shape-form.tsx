@@ -45,7 +45,7 @@ export function ShapeForm({ unit, wish, words, initial, onDone, onCancel }: Shap
   const asksBase = measuresOf(draft).some(({ key }) => key === 'sides');
   return (
     <div className="grid gap-8">
-      <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+      <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
         <Refusal error={form.error} unplaced={form.unplaced} />
         <div className="grid items-start gap-x-6 gap-y-5 sm:grid-cols-2">
           <Field

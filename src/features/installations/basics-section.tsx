@@ -38,7 +38,7 @@ export function BasicsSection({ plan, closed }: { plan: PlanForm; closed: boolea
   return (
     <section className="grid gap-5" aria-labelledby="basics">
       <DimensionHead id="basics">The installation</DimensionHead>
-      <form id={PLAN_FORM} ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+      <form id={PLAN_FORM} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
         <Refusal error={form.error} unplaced={form.unplaced} onReload={plan.reload} />
         <InstallationFields
           value={values.basics}

@@ -55,7 +55,7 @@ export function BuildDayForm({
   const setBreak = (index: number, part: Partial<BuildDayInput['breaks'][number]>) =>
     set({ breaks: day.breaks.map((pause, i) => (i === index ? { ...pause, ...part } : pause)) });
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} />
       <div className="grid grid-cols-2 items-start gap-5 desk:grid-cols-[11rem_repeat(4,8rem)]">
         <Field

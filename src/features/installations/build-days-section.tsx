@@ -9,7 +9,7 @@ import { EmptyNote } from '../../components/ui/note';
 import { counted, formatDate } from '../../lib/formats';
 import { useLiveMap } from '../../lib/live';
 import { BuildDayForm } from './build-day-form';
-import { standing } from './use-plan';
+import { standing } from './standing';
 
 const BLANK: BuildDayInput = {
   date: '',

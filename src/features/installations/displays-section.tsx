@@ -107,7 +107,7 @@ export function DisplaysSection({ installation }: { installation: InstallationRe
         </Sheet>
       )}
       {status !== 'closed' && (
-        <form ref={form.ref} className="grid gap-3" noValidate onSubmit={form.onSubmit}>
+        <form className="grid gap-3" noValidate onSubmit={form.onSubmit}>
           <Refusal error={form.error} unplaced={form.unplaced} />
           <div className="flex flex-wrap items-start gap-x-6 gap-y-3">
             <Field

@@ -23,7 +23,7 @@ export function NewInstallationForm({ onMade }: { onMade: (id: string) => unknow
     onDone: ({ id }) => onMade(id),
   });
   return (
-    <form ref={form.ref} className="grid max-w-[52rem] gap-6" noValidate onSubmit={form.onSubmit}>
+    <form className="grid max-w-[52rem] gap-6" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} />
       <InstallationFields value={basics} onChange={setBasics} problem={form.problem} />
       <div>

@@ -17,6 +17,17 @@ export function PlanSections({ installation }: { installation: InstallationRecor
   return (
     <div className="with-side">
       <div className="grid content-start gap-12">
+        <nav className="only-narrow flex flex-wrap gap-x-6" aria-label="Further down">
+          <a href="#publishing" className="words-link">
+            Publishing
+          </a>
+          <a href="#join-code" className="words-link">
+            Join code
+          </a>
+          <a href="#poster" className="words-link">
+            Poster
+          </a>
+        </nav>
         <BasicsSection plan={plan} closed={closed} />
         <BuildDaysSection installationId={id} closed={closed} />
         <StationsSection installationId={id} closed={closed} />

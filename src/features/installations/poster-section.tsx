@@ -5,7 +5,7 @@ import { DimensionHead } from '../../components/ui/heads';
 import { formatCalendarDay } from '../../lib/formats';
 import { useLiveMap } from '../../lib/live';
 import { BigCode, useJoinCode } from './join-code-section';
-import { standing } from './use-plan';
+import { standing } from './standing';
 
 /** The poster as it is printed: one sheet with the code and the address. */
 export function PosterSection({ installation }: { installation: InstallationRecord }) {

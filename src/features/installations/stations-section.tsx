@@ -14,7 +14,7 @@ import { counted } from '../../lib/formats';
 import { useLiveMap } from '../../lib/live';
 import { useForm } from '../../lib/use-form';
 import type { Wish } from '../../lib/use-send';
-import { standing } from './use-plan';
+import { standing } from './standing';
 
 function StationForm({
   station,
@@ -40,7 +40,7 @@ function StationForm({
     onDone,
   });
   return (
-    <form ref={form.ref} className="grid gap-4 py-3" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-4 py-3" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} />
       <div className="grid items-start gap-x-5 gap-y-3 sm:grid-cols-[minmax(0,1fr)_12rem_9rem]">
         <Field

@@ -32,7 +32,7 @@ export function AddMemberForm({ installationId, mayInvite }: { installationId: s
     },
   });
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       {added !== null && (
         <Note kind="done" title={`${added} takes part now.`}>
           On the day the muster desk confirms that they are there.

@@ -57,7 +57,7 @@ export function CreatePiecesForm({ installationId, frames, templates, codes }: C
     },
   });
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       {made && (
         <Note kind="done" title={`${rangeWords(made)} ${made.length === 1 ? 'is' : 'are'} made.`}>
           Each with a traveller of its own.

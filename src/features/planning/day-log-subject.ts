@@ -1,5 +1,5 @@
 import type { DayLogView } from '../../../shared/contracts/progress';
-import { AGE_BAND_LABELS, type AgeBand } from '../../../shared/safety';
+import { AGE_BAND_LABELS } from '../../../shared/safety';
 import { counted, formatCalendarDay, formatTime, listed } from '../../lib/formats';
 import type { LiveMaps } from '../../lib/live-state';
 
@@ -32,6 +32,9 @@ type Say = (value: unknown, names: LogNames, entry: DayLogView) => string | null
 const text = (value: unknown): string => (typeof value === 'string' ? value : '');
 const texts = (value: unknown): string[] =>
   Array.isArray(value) ? value.filter((one) => typeof one === 'string') : [];
+
+const BANDS: Readonly<Record<string, string>> = AGE_BAND_LABELS;
+const bandWords = (band: unknown): string => BANDS[text(band)] ?? text(band);
 
 function pieceCodes(ids: readonly string[], { records }: LogNames): string {
   const codes = ids.flatMap((id) => records.subAssemblies.get(id)?.code ?? []);
@@ -78,8 +81,8 @@ const SAY: Readonly<Record<string, Say>> = {
   duty: (duty) => text(duty),
   duties: (duties) => listed(texts(duties)),
   fields: (fields) => listed(texts(fields)),
-  ageBand: (band) => AGE_BAND_LABELS[text(band) as AgeBand] ?? text(band),
-  said: (band) => `said ${AGE_BAND_LABELS[text(band) as AgeBand] ?? text(band)}`,
+  ageBand: bandWords,
+  said: (band) => `said ${bandWords(band)}`,
   as: (as) => `as ${text(as)}`,
   exception: (why) => text(why),
   backBy: (at, { zone }) => (typeof at === 'number' ? `back by ${formatTime(at, zone)}` : null),

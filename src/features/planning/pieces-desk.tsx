@@ -63,6 +63,13 @@ export function PiecesDesk({
         >
           Pieces
         </DimensionHead>
+        {!closed && (
+          <p className="only-narrow">
+            <a href="#make-pieces" className="words-link">
+              Make pieces
+            </a>
+          </p>
+        )}
         {letters.length > 1 && (
           <ChoiceRow
             label="letter of the code"

@@ -125,7 +125,7 @@ function RenameForm({ piece, path, onDone }: { piece: SubAssemblyRecord; path: s
     onDone,
   });
   return (
-    <form ref={form.ref} className="grid gap-2" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-2" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} />
       <Field
         label={`name of ${piece.code}`}

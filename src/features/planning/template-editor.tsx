@@ -100,7 +100,7 @@ export function TemplateEditor(props: TemplateEditorProps) {
     setOpen((now) => new Set(now.has(key) ? [...now].filter((one) => one !== key) : [...now, key]));
   const frameCounts = frame && countsOf(frame);
   return (
-    <form ref={form.ref} className="grid gap-5" noValidate onSubmit={form.onSubmit}>
+    <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
       <Refusal error={form.error} unplaced={form.unplaced} onReload={onReload} />
       <div className="grid items-start gap-x-6 gap-y-4 sm:grid-cols-2">
         <Field
