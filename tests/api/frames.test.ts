@@ -43,7 +43,7 @@ describe('createFrame', () => {
       hall,
       'SELECT name, source FROM frame WHERE installation_id = ?',
     );
-    expect(rows.map(({ name, source }) => [name, JSON.parse(source)])).toEqual([
+    expect(rows.map(({ name, source }) => [name, JSON.parse(source) as unknown])).toEqual([
       ['Bay', { kind: 'obj', fileName: 'bay.obj' }],
     ]);
     const [frame] = await list();
