@@ -3,6 +3,7 @@ import { OptionStruts } from '../../components/ui/choices';
 import { Field } from '../../components/ui/field';
 import { typedNumber } from '../../lib/check-input';
 import { formatTime } from '../../lib/formats';
+import { serverNow } from '../../lib/server-clock';
 
 /** What is typed about an installation. */
 export interface Basics {
@@ -25,7 +26,7 @@ const ZONES: readonly string[] = Intl.supportedValuesOf('timeZone');
 /** The time there now, so that a wrong zone shows. */
 function timeThere(zone: string): string {
   try {
-    return `There it is ${formatTime(Date.now(), zone.trim())} now.`;
+    return `There it is ${formatTime(serverNow(), zone.trim())} now.`;
   } catch {
     return 'Of the venue. Begin to type a city.';
   }
