@@ -4,13 +4,14 @@ import type { FieldProblem } from '../../shared/contracts/errors';
 import { ApiError } from './api';
 import { useSend, type Wish } from './use-send';
 
-/** What a form was told: by its own look at the fields, or by the server. */
+/** What a form was told: by its own look at the fields (`own`), or by the server. */
 interface Told {
   error: unknown;
   fields: readonly FieldProblem[];
+  own: boolean;
 }
 
-const NOTHING: Told = { error: null, fields: [] };
+const NOTHING: Told = { error: null, fields: [], own: false };
 
 export interface Form {
   onSubmit: (event: SyntheticEvent<HTMLFormElement>) => void;
@@ -28,14 +29,18 @@ export interface Form {
 /**
  * A form: every problem at once beside its field, the focus on the first wrong one, nothing sent twice, nothing typed lost.
  * @param request what to send, or the problems that keep it from being sent
+ *   Pure: after a refusal it is asked again while somebody types, so that what was put right stops being marked.
  * @param onDone what to do with the answer
+ * @param onProblems called before problems are shown, to open what hides their fields
  */
 export function useForm<R = unknown>({
   request,
   onDone,
+  onProblems,
 }: {
   request: () => Wish | { problems: readonly FieldProblem[] };
   onDone?: (reply: R) => unknown;
+  onProblems?: (fields: readonly FieldProblem[]) => void;
 }): Form {
   const sending = useRef(false);
   const [told, setTold] = useState<Told>(NOTHING);
@@ -45,10 +50,12 @@ export function useForm<R = unknown>({
   const tell = (next: Told, form: HTMLFormElement) => {
     // The words have to stand on the page before the focus can go to the field they belong to.
     flushSync(() => {
+      onProblems?.(next.fields);
       setTold(next);
       setUnplaced([]);
     });
-    setUnplaced(next.fields.map(({ message }) => message).filter((words) => !isShown(words)));
+    const shown = new Set(next.fields.filter(({ message }) => isShown(message)).map(({ path }) => path));
+    setUnplaced(next.fields.filter(({ path }) => !shown.has(path)).map(({ message }) => message));
     firstWrong(form)?.focus();
   };
 
@@ -56,7 +63,7 @@ export function useForm<R = unknown>({
     if (sending.current) return;
     const wish = request();
     if ('problems' in wish) {
-      tell({ error: null, fields: wish.problems }, form);
+      tell({ error: null, fields: wish.problems, own: true }, form);
       return;
     }
     sending.current = true;
@@ -65,18 +72,19 @@ export function useForm<R = unknown>({
       setTold(NOTHING);
       setUnplaced([]);
     } catch (error) {
-      tell({ error, fields: error instanceof ApiError ? error.fields : [] }, form);
+      tell({ error, fields: error instanceof ApiError ? error.fields : [], own: false }, form);
     } finally {
       sending.current = false;
     }
   };
 
+  const fields = told.own ? stillWrong(told.fields, request()) : told.fields;
   return {
     onSubmit: (event) => {
       event.preventDefault();
       void submit(event.currentTarget);
     },
-    problem: (path) => told.fields.find((field) => field.path === path)?.message,
+    problem: (path) => fields.find((field) => field.path === path)?.message,
     busy: change.isPending,
     error: told.fields.length === 0 ? told.error : null,
     unplaced,
@@ -85,6 +93,16 @@ export function useForm<R = unknown>({
       setUnplaced([]);
     },
   };
+}
+
+/** Of the problems that were told, those that a new look still finds, in their present words. */
+function stillWrong(
+  told: readonly FieldProblem[],
+  now: Wish | { problems: readonly FieldProblem[] },
+): readonly FieldProblem[] {
+  if (!('problems' in now)) return [];
+  const paths = new Set(told.map(({ path }) => path));
+  return now.problems.filter(({ path }) => paths.has(path));
 }
 
 const isShown = (words: string): boolean =>

@@ -71,7 +71,7 @@ export function AgeRulesSection({
         <thead>
           <tr>
             <th scope="col">what</th>
-            <th scope="col" className="w-64">
+            <th scope="col" className="w-72">
               who may
             </th>
             <th scope="col">where the default comes from</th>

@@ -82,7 +82,7 @@ export function BuildDayForm({
         {day.breaks.map((pause, i) => (
           <div
             key={i}
-            className="grid grid-cols-2 items-end gap-x-5 gap-y-2 sm:grid-cols-[8rem_8rem_minmax(0,14rem)_auto]"
+            className="grid grid-cols-2 items-start gap-x-5 gap-y-2 sm:grid-cols-[8rem_8rem_minmax(0,14rem)_auto]"
           >
             <Field
               label={`break ${i + 1} from`}
@@ -105,6 +105,7 @@ export function BuildDayForm({
               error={form.problem(`breaks.${i}.label`)}
             />
             <Action
+              className="sm:mt-6"
               look="words"
               label={`Take out break ${i + 1}`}
               onClick={() => set({ breaks: day.breaks.filter((_, other) => other !== i) })}

@@ -17,7 +17,7 @@ export function PlanSections({ installation }: { installation: InstallationRecor
   return (
     <div className="with-side">
       <div className="grid content-start gap-12">
-        <nav className="only-narrow flex flex-wrap gap-x-6" aria-label="Further down">
+        <nav className="flex flex-wrap gap-x-6 wide:hidden" aria-label="Further down">
           <a href="#publishing" className="words-link">
             Publishing
           </a>

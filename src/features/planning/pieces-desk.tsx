@@ -59,12 +59,16 @@ export function PiecesDesk({
       <section className="grid content-start gap-4" aria-labelledby="pieces">
         <DimensionHead
           id="pieces"
-          right={`${counted(shown.length, 'piece')}, ${formatDuration(seconds)} of hands`}
+          right={
+            shown.length === 0
+              ? undefined
+              : `${counted(shown.length, 'piece')}, ${formatDuration(seconds)} of hands`
+          }
         >
           Pieces
         </DimensionHead>
         {!closed && (
-          <p className="only-narrow">
+          <p className="wide:hidden">
             <a href="#make-pieces" className="words-link">
               Make pieces
             </a>

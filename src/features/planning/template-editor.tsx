@@ -47,13 +47,12 @@ export function TemplateEditor(props: TemplateEditorProps) {
   const form = useForm<{ id: string; revision: number }>({
     request: () => {
       const checked = checkTemplate(draft);
-      if (!('problems' in checked)) return { ...wish, body: checked.body };
+      return 'problems' in checked ? checked : { ...wish, body: checked.body };
+    },
+    onProblems: (fields) => {
       // A closed step with something wrong in it opens, so that the words stand beside their field.
-      const wrong = draft.steps.filter((_, i) =>
-        checked.problems.some(({ path }) => path.startsWith(`steps.${i}.`)),
-      );
+      const wrong = draft.steps.filter((_, i) => fields.some(({ path }) => path.startsWith(`steps.${i}.`)));
       setOpen((now) => new Set([...now, ...wrong.map(({ key }) => key)]));
-      return checked;
     },
     onDone: (reply) => {
       setKept({ ...draft, revision: reply.revision });
