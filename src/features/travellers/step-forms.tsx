@@ -92,13 +92,13 @@ export function StepForm({ deed, step, traveller, path, people, onClose }: StepF
     minutes: deed === 'still-wet' ? '20' : '0',
     crew: new Set(),
   });
-  const { ref, onSubmit, problem, busy, error, unplaced } = useForm({
+  const { onSubmit, problem, busy, error, unplaced } = useForm({
     request: () => ({ method: 'POST', path: `${path}/${deed}`, body: bodyOf(deed, values) }),
     onDone: onClose,
   });
   const set = (change: Partial<Values>) => setValues((now) => ({ ...now, ...change }));
   return (
-    <form ref={ref} className="step-form" noValidate onSubmit={onSubmit}>
+    <form className="step-form" noValidate onSubmit={onSubmit}>
       <Refusal error={error} unplaced={unplaced} />
       <DeedFields deed={deed} {...{ step, traveller, people, values, set }} problem={problem} />
       <div className="flex flex-wrap items-center gap-4">
