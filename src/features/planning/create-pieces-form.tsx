@@ -44,7 +44,8 @@ export function CreatePiecesForm({ installationId, frames, templates, codes }: C
         frameId,
         templateId,
         letter,
-        name,
+        // The frame's name stands in the empty field, so it is what an empty field means.
+        name: name.trim() === '' ? (frame?.name ?? '') : name,
         quantity: typedNumber(quantity),
       });
       return 'problems' in checked
@@ -94,7 +95,7 @@ export function CreatePiecesForm({ installationId, frames, templates, codes }: C
         value={name}
         onChange={(event) => setName(event.target.value)}
         error={form.problem('name')}
-        hint="Several are numbered: North bay 1, North bay 2."
+        hint="Left empty it is the frame's. Several are numbered: North bay 1, North bay 2."
       />
       <div className="grid grid-cols-2 items-start gap-5">
         <Field

@@ -36,6 +36,7 @@ export async function openPage(
   size: Size,
 ): Promise<{ context: BrowserContext; page: Page; errors: string[] }> {
   const context = await browser.newContext({ viewport: SIZES[size], reducedMotion: 'reduce' });
+  context.setDefaultTimeout(10_000);
   const page = await context.newPage();
   const errors: string[] = [];
   page.on('pageerror', (error) => errors.push(error.message));
