@@ -1,7 +1,8 @@
 import { isValid, parseISO } from 'date-fns';
 import { z } from 'zod';
 
-const timeOfDay = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'A time of day such as 09:30.');
+const TIME = /^([01]\d|2[0-3]):[0-5]\d$/;
+const timeOfDay = z.string().regex(TIME, 'A time of day such as 09:30.');
 
 /** Whether the runtime knows an IANA zone of this name. */
 export function isTimeZone(name: string): boolean {
@@ -33,6 +34,16 @@ export const editInstallationSchema = z.strictObject({
   revision: z.number().int().min(0),
 });
 
+const isTime = (value: unknown): value is string => typeof value === 'string' && TIME.test(value);
+
+/** Whether a value has the parts whose order is looked at; what is wrong inside them was said already. */
+const hasTimes = (value: unknown): boolean =>
+  typeof value === 'object' &&
+  value !== null &&
+  'breaks' in value &&
+  Array.isArray(value.breaks) &&
+  value.breaks.every((pause: unknown) => typeof pause === 'object' && pause !== null);
+
 /** A dated session. Every problem of the order of its times is named at its own field. */
 export const buildDaySchema = z
   .strictObject({
@@ -54,32 +65,42 @@ export const buildDaySchema = z
       )
       .max(12),
   })
-  .superRefine((day, context) => {
-    const order = [
-      ['doors', 'start', 'The start comes after the doors open.'],
-      ['start', 'clearUp', 'Clear-up comes after the start.'],
-      ['clearUp', 'end', 'The end comes after clear-up begins.'],
-    ] as const;
-    for (const [before, after, message] of order) {
-      const late =
-        after === 'end' || after === 'clearUp' ? day[after] <= day[before] : day[after] < day[before];
-      if (late) context.addIssue({ code: 'custom', path: [after], message });
-    }
-    day.breaks.forEach((pause, index) => {
-      if (pause.to <= pause.from)
-        context.addIssue({
-          code: 'custom',
-          path: ['breaks', index, 'to'],
-          message: 'A break ends after it begins.',
-        });
-      if (pause.from < day.start || pause.to > day.end)
-        context.addIssue({
-          code: 'custom',
-          path: ['breaks', index, 'from'],
-          message: 'A break lies between start and end.',
-        });
-    });
+  .superRefine(checkOrder, { when: ({ value }) => hasTimes(value) });
+
+/** Times that are none are left out: their own field says so. */
+function checkOrder(
+  day: { [key in 'doors' | 'start' | 'clearUp' | 'end']: string } & {
+    breaks: { from: string; to: string }[];
+  },
+  context: z.RefinementCtx,
+): void {
+  const order = [
+    ['doors', 'start', 'The start comes after the doors open.'],
+    ['start', 'clearUp', 'Clear-up comes after the start.'],
+    ['clearUp', 'end', 'The end comes after clear-up begins.'],
+  ] as const;
+  for (const [before, after, message] of order) {
+    if (!isTime(day[before]) || !isTime(day[after])) continue;
+    const late =
+      after === 'end' || after === 'clearUp' ? day[after] <= day[before] : day[after] < day[before];
+    if (late) context.addIssue({ code: 'custom', path: [after], message });
+  }
+  day.breaks.forEach((pause, index) => {
+    if (!isTime(pause.from) || !isTime(pause.to)) return;
+    if (pause.to <= pause.from)
+      context.addIssue({
+        code: 'custom',
+        path: ['breaks', index, 'to'],
+        message: 'A break ends after it begins.',
+      });
+    if ((isTime(day.start) && pause.from < day.start) || (isTime(day.end) && pause.to > day.end))
+      context.addIssue({
+        code: 'custom',
+        path: ['breaks', index, 'from'],
+        message: 'A break lies between start and end.',
+      });
   });
+}
 
 export const STATION_KINDS = ['saw', 'bench', 'glue', 'paint bay', 'hanging zone', 'other'] as const;
 export const stationSchema = z.strictObject({

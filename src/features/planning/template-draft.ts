@@ -131,8 +131,8 @@ function readClocks(
   return { clocks, own };
 }
 
-/** The body that keeps the template, or every problem beside its field. */
-export function checkTemplate(draft: TemplateDraft) {
+/** The body that keeps the template, or every problem beside its field; a station that is gone counts as none. */
+export function checkTemplate(draft: TemplateDraft, stationIds: ReadonlySet<string>) {
   const own: FieldProblem[] = [];
   const steps = draft.steps.map((step, index) => {
     const read = readClocks(step, index);
@@ -140,7 +140,7 @@ export function checkTemplate(draft: TemplateDraft) {
     return {
       operation: step.operation,
       name: step.name,
-      stationId: step.stationId,
+      stationId: stationIds.has(step.stationId) ? step.stationId : '',
       hazards: step.hazards,
       toolKinds: step.tools
         .split(',')

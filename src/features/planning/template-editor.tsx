@@ -46,7 +46,7 @@ export function TemplateEditor(props: TemplateEditorProps) {
   const [frameId, setFrameId] = useState(frames[0]?.id ?? '');
   const form = useForm<{ id: string; revision: number }>({
     request: () => {
-      const checked = checkTemplate(draft);
+      const checked = checkTemplate(draft, new Set(stations.map(({ id }) => id)));
       return 'problems' in checked ? checked : { ...wish, body: checked.body };
     },
     onProblems: (fields) => {
