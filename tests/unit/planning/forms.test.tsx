@@ -1,5 +1,5 @@
 // @vitest-environment jsdom
-import { cleanup, screen, waitFor } from '@testing-library/react';
+import { cleanup, fireEvent, screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { BuildDayForm } from '../../../src/features/installations/build-day-form';
@@ -51,14 +51,17 @@ describe('new installation', () => {
     expect(errorsShown()).toEqual(['How many people the hall may hold, as posted at its door.']);
   });
 
-  it('NewInstallationForm > pressed twice > sent once, with a key, and goes on', async () => {
+  it('NewInstallationForm > sent three times at once > sent once, with a key, and goes on', async () => {
     const user = userEvent.setup();
     const sent = fakeServer({ data: { id: 'new-one' } });
     // Going on takes its time: the form is still there when the second press comes.
     const onMade = vi.fn(() => new Promise(() => undefined));
     show(<NewInstallationForm onMade={onMade} />);
     await fillIn(user);
-    await user.dblClick(start());
+    const form = start().closest('form')!;
+    fireEvent.submit(form);
+    fireEvent.submit(form);
+    await user.click(start());
     await waitFor(() => expect(onMade).toHaveBeenCalledWith('new-one'));
     expect(sent).toHaveLength(1);
     expect(sent[0]).toMatchObject({
