@@ -1,37 +1,15 @@
-import { useQuery, useQueryClient } from '@tanstack/react-query';
+import { useQueryClient } from '@tanstack/react-query';
 import type { JoinCodeView } from '../../../shared/contracts/installations';
 import type { InstallationRecord } from '../../../shared/contracts/live';
+import { BigCode } from '../../components/ui/big-code';
 import { ConfirmAction } from '../../components/ui/confirm-action';
 import { DimensionHead } from '../../components/ui/heads';
 import { Pending } from '../../components/ui/pending';
 import { Refusal } from '../../components/ui/refusal';
-import { get } from '../../lib/api';
 import { formatDay, formatTime } from '../../lib/formats';
+import { joinCodeKey, useJoinCode } from '../../lib/join-code';
 import { useMay } from '../../lib/session';
 import { CopyLine } from './copy-line';
-
-const codeKey = (installationId: string) => ['join-code', installationId] as const;
-
-/** The installation's join code. */
-export const useJoinCode = (installationId: string) =>
-  useQuery({
-    queryKey: codeKey(installationId),
-    queryFn: () => get<JoinCodeView>(`/installations/${installationId}/join-code`),
-  });
-
-/** The code in large cells, read out letter by letter. */
-export function BigCode({ code }: { code: string }) {
-  return (
-    <p className="big-code">
-      <span className="sr-only">{code.split('').join(' ')}</span>
-      {code.split('').map((character, i) => (
-        <span key={i} className="big-code-cell" aria-hidden="true">
-          {character}
-        </span>
-      ))}
-    </p>
-  );
-}
 
 /** The code on the poster and its link; a new one when it got about. */
 export function JoinCodeSection({ installation }: { installation: InstallationRecord }) {
@@ -59,7 +37,7 @@ export function JoinCodeSection({ installation }: { installation: InstallationRe
                 title="Make a new join code?"
                 confirm="Make a new one"
                 wish={{ method: 'POST', path: `/installations/${id}/join-code` }}
-                onDone={(view) => client.setQueryData(codeKey(id), view)}
+                onDone={(view) => client.setQueryData(joinCodeKey(id), view)}
               >
                 <p>
                   {`${code.data.joinCode} stops working at once, on every poster and in every message. `}

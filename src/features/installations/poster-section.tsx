@@ -1,10 +1,11 @@
 import type { InstallationRecord } from '../../../shared/contracts/live';
 import { Action } from '../../components/ui/action';
 import { BeeMark } from '../../components/ui/bee-mark';
+import { BigCode } from '../../components/ui/big-code';
 import { DimensionHead } from '../../components/ui/heads';
 import { formatCalendarDay } from '../../lib/formats';
+import { useJoinCode } from '../../lib/join-code';
 import { useLiveMap } from '../../lib/live';
-import { BigCode, useJoinCode } from './join-code-section';
 import { standing } from './standing';
 
 /** The poster as it is printed: one sheet with the code and the address. */

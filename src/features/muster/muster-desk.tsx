@@ -6,6 +6,7 @@ import { useServerNow } from '../../lib/server-clock';
 import { useMay } from '../../lib/session';
 import { Arrivals } from './arrivals';
 import { HeadCount } from './head-count';
+import { Latecomers } from './latecomers';
 import { Gone, OnSite } from './on-site';
 import { presenceOf, presentWith, WANTED_DUTIES, type Presence } from './presence';
 
@@ -53,6 +54,7 @@ export function MusterDesk({ installationId }: { installationId: string }) {
             </DimensionHead>
             <HeadCount count={present.length} limit={limit} />
           </section>
+          {may('installation.read-code') && <Latecomers installationId={installationId} />}
           <Duties presence={presence} />
           {gone.length > 0 && (
             <section aria-labelledby="muster-gone">
