@@ -94,7 +94,12 @@ function missingFor({ records }: Records, person: PersonRecord, now: number): Pe
 /** Somebody the live state does not know may do nothing. */
 const NOBODY = { confirmed: false, ageBand: 'under-9', duties: [], missing: {} } as const;
 
-function personFacts(live: Records, personId: string, now: number): PersonFacts {
+/**
+ * A person as the rules see them.
+ * @param live the live state of the installation
+ * @param now the server's time, ms UTC
+ */
+export function personFacts(live: Records, personId: string, now: number): PersonFacts {
   const person = live.records.people.get(personId);
   const inHand = listsOf(live.records.steps).inHand.get(personId) ?? 0;
   if (!person || person.removed) return { id: personId, ...NOBODY, inHand };
@@ -106,6 +111,15 @@ function personFacts(live: Records, personId: string, now: number): PersonFacts 
     duties: person.duties,
     inHand,
     missing: missingFor(live, person, now),
+  };
+}
+
+/** What holds for everybody in the hall: the stops that are raised, and the age table as the organiser tightened it. */
+export function houseRules({ records }: Records): { stops: readonly StopScope[]; ageRules: AgeRules } {
+  const [installation] = records.installation.values();
+  return {
+    stops: raisedStops(records.stops),
+    ageRules: installation ? ageRulesOf(installation) : DEFAULT_AGE_RULES,
   };
 }
 
@@ -122,16 +136,14 @@ export function worldOf(live: Records, personId: string, step: Step, now: number
   const { records } = live;
   const lists = listsOf(records.steps);
   const [installation] = records.installation.values();
+  const { stops, ageRules } = houseRules(live);
   return {
     now,
     step,
     traveller: lists.ofPiece.get(step.subAssemblyId) ?? [step],
     station: lists.dryingAt.get(step.stationId) ?? [],
     person: personFacts(live, personId, now),
-    stops: raisedStops(records.stops),
-    settings: {
-      maxInHand: installation?.settings.maxInHand ?? 0,
-      ageRules: installation ? ageRulesOf(installation) : DEFAULT_AGE_RULES,
-    },
+    stops,
+    settings: { maxInHand: installation?.settings.maxInHand ?? 0, ageRules },
   };
 }

@@ -1,0 +1,51 @@
+import { useState } from 'react';
+import { Action } from '../../components/ui/action';
+import { PageHead } from '../../components/ui/heads';
+import { useMay } from '../../lib/session';
+import { LendDesk } from './lend-desk';
+import { OutOfUse } from './out-of-use';
+import { TakeBackPanel } from './take-back';
+import { ToolsList } from './tools-list';
+import { useCrib } from './use-crib';
+import { WhatEachHas, WhoHasWhat } from './who-has-what';
+
+/** The tool store: out in two scans, back in one, who has it, what is not to be used. */
+export function CribDesk({ installationId }: { installationId: string }) {
+  const crib = useCrib(installationId);
+  const may = useMay(installationId);
+  const [takingBack, setTakingBack] = useState(false);
+  const late = crib.out.filter((one) => one.late).length;
+  const inside = crib.tools.length - crib.out.length;
+  return (
+    <>
+      <PageHead
+        title="Crib"
+        summary={`${crib.out.length} tools out, ${inside} in, ${crib.tagged.length} out of use. ${late} late.`}
+        aside={
+          may('tool.take-back') && (
+            <Action
+              size="phone"
+              look="crossed"
+              expanded={takingBack}
+              onClick={() => setTakingBack(!takingBack)}
+            >
+              Take back a tool
+            </Action>
+          )
+        }
+      />
+      <div className="crib">
+        <div className="crib-main">
+          {takingBack && <TakeBackPanel installationId={installationId} crib={crib} />}
+          {may('tool.lend') && <LendDesk installationId={installationId} crib={crib} />}
+          <WhoHasWhat crib={crib} />
+          <ToolsList installationId={installationId} crib={crib} />
+        </div>
+        <aside className="crib-side">
+          <OutOfUse installationId={installationId} crib={crib} />
+          <WhatEachHas crib={crib} />
+        </aside>
+      </div>
+    </>
+  );
+}

@@ -1,0 +1,44 @@
+import type { Ref } from 'react';
+import { Field } from '../../components/ui/field';
+
+export interface ScanFieldProps {
+  label: string;
+  value: string;
+  onChange: (typed: string) => void;
+  /** Enter was pressed, by hand or by a scanner that types. */
+  onScan: () => void;
+  error: string | undefined;
+  hint: string | undefined;
+  /** What the key of a phone says. */
+  enter: 'next' | 'go';
+  capitals?: boolean;
+  ref?: Ref<HTMLInputElement>;
+}
+
+/** A field for a number: typed, or scanned by something that types the number and Enter. */
+export function ScanField(props: ScanFieldProps) {
+  const { label, value, onChange, onScan, error, hint, enter, capitals = false, ref } = props;
+  return (
+    <Field
+      ref={ref}
+      label={label}
+      size="phone"
+      value={value}
+      autoComplete="off"
+      autoCapitalize={capitals ? 'characters' : 'none'}
+      autoCorrect="off"
+      spellCheck={false}
+      enterKeyHint={enter}
+      error={error}
+      hint={hint}
+      // The next scan writes over what stands there.
+      onFocus={(event) => event.target.select()}
+      onChange={(event) => onChange(event.target.value)}
+      onKeyDown={(event) => {
+        if (event.key !== 'Enter') return;
+        event.preventDefault();
+        onScan();
+      }}
+    />
+  );
+}
