@@ -36,8 +36,8 @@ export function FramePreview({ frame, unit, name }: { frame: Frame; unit: Length
       <UnrolledDrawing frame={frame} unit={unit} view={view} numbers={numbers} label={name || 'The frame'} />
       {numbers === 'both' && (
         <p className="text-small text-pencil">
-          <strong className="text-ink">Dark</strong> numbers are joints,{' '}
-          <span className="font-light">light</span> ones are struts.
+          <strong className="text-ink">Bold</strong> numbers are joints,{' '}
+          <span className="font-light">thin</span> ones are struts.
         </p>
       )}
       <FrameFigures frame={frame} unit={unit} />

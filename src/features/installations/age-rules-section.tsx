@@ -102,7 +102,7 @@ export function AgeRulesSection({
                     {choices.map(({ value, words }, i) => (
                       <option key={value} value={value}>
                         {words}
-                        {i === 0 ? ', the default' : ''}
+                        {i === 0 ? ', default' : ''}
                       </option>
                     ))}
                   </SelectField>

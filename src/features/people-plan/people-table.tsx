@@ -183,13 +183,10 @@ function PersonRow({
             checked={person.duties.includes(duty)}
             disabled={busy || closed}
             onChange={(event) => onGive(duty, event.target.checked)}
-            hideWords
           >
-            {person.name}: {duty}
+            <span className="sr-only">{person.name}: </span>
+            <span className="duty-word">{duty}</span>
           </CheckField>
-          <span className="duty-word" aria-hidden="true">
-            {duty}
-          </span>
         </td>
       ))}
       <td data-label="where">{whereabouts(person)}</td>

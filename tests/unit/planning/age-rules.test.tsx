@@ -44,13 +44,13 @@ describe('age rules', () => {
   it('AgeRulesSection > each rule > only its default and what is stricter can be chosen', () => {
     show(<Plan />);
     expect(optionsOf('who may: a hot-glue gun')).toEqual([
-      '9 and over, the default',
+      '9 and over, default',
       '13 and over',
       '16 and over',
       '18 and over',
     ]);
-    expect(optionsOf('who may: a powered saw')).toEqual(['18 and over, the default']);
-    expect(optionsOf('who may: a ladder above 1.8 m')[0]).toBe('under 18: 1\u2009800 mm, the default');
+    expect(optionsOf('who may: a powered saw')).toEqual(['18 and over, default']);
+    expect(optionsOf('who may: a ladder above 1.8 m')[0]).toBe('under 18: 1\u2009800 mm, default');
     expect(optionsOf('who may: a ladder above 1.8 m').at(-1)).toBe('under 18: no ladder at all');
     expect(screen.getByLabelText<HTMLSelectElement>('who may: a ladder above 1.8 m').value).toBe('1200');
   });
