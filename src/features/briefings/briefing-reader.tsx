@@ -1,9 +1,10 @@
 import { useQuery } from '@tanstack/react-query';
 import type { BriefingTextView } from '../../../shared/contracts/safety';
-import { bestSignOff, signOffProgress } from '../../../shared/safety/sign-off';
+import { bestSignOff, signOffProgress, type SignOffProgress } from '../../../shared/safety/sign-off';
 import { MarkedStick } from '../../components/ui/marked-stick';
 import { Note } from '../../components/ui/note';
 import { Pending } from '../../components/ui/pending';
+import { useWidth } from '../../components/ui/use-width';
 import { ApiError, get } from '../../lib/api';
 import { formatDate, formatTime, listed } from '../../lib/formats';
 import { useLiveMap } from '../../lib/live';
@@ -53,24 +54,8 @@ export function BriefingReader({ installationId, personId, briefingKey }: Props)
   const me = people.get(personId)?.name ?? '';
   const open = validity !== 'valid' && validity !== 'NOT_COUNTERSIGNED' && validity !== 'AGE_NOT_CONFIRMED';
   return (
-    <div className="grid gap-7">
-      <div className="stick-scroll" role="group" aria-label={words.title}>
-        <MarkedStick
-          code={view.title}
-          pitch={80}
-          steps={steps.map(({ step, state }) => ({ name: words.parts[step], state }))}
-        />
-        <div className="grid grid-cols-4" aria-hidden="true">
-          {steps.map(({ step, state }) => (
-            <span
-              key={step}
-              className={state === 'in hand' ? 'text-center font-semibold' : 'text-center text-pencil'}
-            >
-              {words.parts[step]}
-            </span>
-          ))}
-        </div>
-      </div>
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-7">
+      <Progress code={view.title} steps={steps} />
       {validity === 'valid' && (
         <Note
           kind="done"
@@ -115,6 +100,29 @@ export function BriefingReader({ installationId, personId, briefingKey }: Props)
             )
           : listed(leads)}
       </span>
+    </div>
+  );
+}
+
+/** How far the sign-off is: read, answer, sign, countersigned along one stick as wide as the page. */
+function Progress({ code, steps }: { code: string; steps: SignOffProgress['steps'] }) {
+  const { briefing: words } = useMessages();
+  const [ref, width] = useWidth<HTMLDivElement>(350);
+  const pitch = Math.min(160, Math.floor((width - 16) / steps.length));
+  return (
+    <div ref={ref} className="min-w-0" role="group" aria-label={words.title}>
+      <MarkedStick
+        code={code}
+        pitch={pitch}
+        steps={steps.map(({ step, state }) => ({ name: words.parts[step], state }))}
+      />
+      <div className="flex flex-wrap justify-between gap-x-3" aria-hidden="true">
+        {steps.map(({ step, state }) => (
+          <span key={step} className={state === 'in hand' ? 'font-semibold' : 'text-pencil'}>
+            {words.parts[step]}
+          </span>
+        ))}
+      </div>
     </div>
   );
 }

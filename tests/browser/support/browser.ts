@@ -64,7 +64,12 @@ export async function expectNoAxeViolations(page: Page, what: string): Promise<v
  * nothing from it. What scrolls by itself in a box of its own, such as a wide table, may.
  */
 export async function expectNoSidewaysScroll(page: Page, what: string): Promise<void> {
-  const wide = await page.evaluate(() => {
+  // Drawings are drawn anew for a width a moment after it has changed.
+  await expect.poll(() => tooWide(page), { message: what, timeout: 3000, interval: 50 }).toEqual([]);
+}
+
+function tooWide(page: Page): Promise<string[]> {
+  return page.evaluate(() => {
     const room = document.documentElement.clientWidth;
     const scrollsItself = (element: Element): boolean => {
       for (
@@ -90,7 +95,6 @@ export async function expectNoSidewaysScroll(page: Page, what: string): Promise<
       })
       .slice(0, 5);
   });
-  expect(wide, what).toEqual([]);
 }
 
 /** Press Tab until the thing with this accessible name has the focus. */
