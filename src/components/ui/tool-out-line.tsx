@@ -11,23 +11,30 @@ export type DayWindow = {
 function placeOf({ opens, closes }: DayWindow): (time: string) => number {
   const whole = Math.max(minutesBetween(opens, closes), 1);
   return (time) => {
-    const after = minutesOf(time) - minutesOf(opens);
-    return (Math.min(Math.max(after, 0), whole) / whole) * 100;
+    // A night's line goes on past midnight.
+    return (Math.min(minutesBetween(opens, time), whole) / whole) * 100;
   };
 }
 
-export type ToolOutLineProps = DayWindow & { out: string; backBy: string; now: string };
+export type ToolOutLineProps = DayWindow & {
+  out: string;
+  backBy: string;
+  now: string;
+  /** What it says, where the times on the line are not the whole of it. */
+  words?: string;
+};
 
 /** A tool that is out: thick till now, thin to its back-by; the late part thick in madder. */
-export function ToolOutLine({ out, backBy, now, ...window }: ToolOutLineProps) {
+export function ToolOutLine({ out, backBy, now, words, ...window }: ToolOutLineProps) {
   const at = placeOf(window);
   const pct = (time: string): string => `${at(time)}%`;
   const late = at(now) > at(backBy);
-  const words = late
+  const said = late
     ? `out since ${out}, should be back by ${backBy}, late`
     : `out since ${out}, back by ${backBy}`;
   return (
-    <svg className="tool-out" width="100%" height="16" role="img" aria-label={words}>
+    <svg className="tool-out" width="100%" height="16" role="img" aria-label={words ?? said}>
+      <line className="tool-out-now" x1={pct(now)} x2={pct(now)} y1="-14" y2="30" stroke="var(--pencil)" />
       {late ? (
         <>
           <line x1={pct(out)} x2={pct(backBy)} y1="8" y2="8" stroke="var(--ink)" strokeWidth="1.5" />

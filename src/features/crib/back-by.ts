@@ -1,5 +1,5 @@
 import type { BuildDayRecord } from '../../../shared/contracts/live';
-import { formatTime, minutesBetween, minutesOf } from '../../lib/formats';
+import { formatDay, formatTime, minutesBetween, minutesOf } from '../../lib/formats';
 
 export const BACK_BY = ['30', '60', '120', 'day'] as const;
 export type BackBy = (typeof BACK_BY)[number];
@@ -48,4 +48,10 @@ export function backByMinutes(
   if (!overnight && minutesOf(time) >= minutesOf(day.clearUp)) return null;
   const left = minutesBetween(time, day.clearUp);
   return left >= LEAST_MINUTES ? left : null;
+}
+
+/** A time of today as `14:07`, one of another day as `14:07 on Sat 14 June`. Times in ms UTC. */
+export function timeWords(at: number, now: number, zone: string): string {
+  const time = formatTime(at, zone);
+  return localDate(at, zone) === localDate(now, zone) ? time : `${time} on ${formatDay(at, zone)}`;
 }

@@ -2,21 +2,20 @@ import { useEffect, useRef, useState } from 'react';
 import type { AgeLimit } from '../../../shared/safety/age-rules';
 import type { PersonRecord, ToolRecord } from '../../../shared/contracts/live';
 import { decideLend } from '../../../shared/crib/decide-lend';
-import { AGE_BAND_LABELS, HAZARD_LABELS } from '../../../shared/safety/hazards';
 import { Action } from '../../components/ui/action';
 import { SelectField } from '../../components/ui/field';
 import { ChoiceRow } from '../../components/ui/heads';
 import { Note } from '../../components/ui/note';
 import { Refusal } from '../../components/ui/refusal';
-import { formatTime } from '../../lib/formats';
 import { useLive, useLiveMap } from '../../lib/live';
 import type { LiveState } from '../../lib/live-state';
 import { useSend } from '../../lib/use-send';
 import { houseRules, personFacts } from '../../lib/world';
-import { BACK_BY, BACK_BY_WORDS, backByMinutes, type BackBy } from './back-by';
+import { BACK_BY, BACK_BY_WORDS, backByMinutes, timeWords, type BackBy } from './back-by';
 import { lendWords, limitWords, type LendWords } from './lend-words';
-import { looksLikeTool, readPerson, readTool } from './scan';
+import { looksLikeTool, personOffer, personProblem, readPerson, readTool, toolProblem } from './scan';
 import { ScanField } from './scan-field';
+import { PersonRead, ToolRead } from './scan-read';
 import { ScanStrut, type ScanState } from './scan-strut';
 import { TakenBack, useTakeBack } from './take-back';
 import type { Crib } from './use-crib';
@@ -61,8 +60,15 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
     setPersonId(null);
     setToolId(null);
     setWrong(null);
+    // The next tool goes along with its person again, not to the last one's station.
+    setStationId('');
     lend.reset();
     personField.current?.focus();
+  };
+  const forgetTool = () => {
+    setTypedTool('');
+    setToolId(null);
+    lend.reset();
   };
   const refusalFor = (who: PersonRecord, what: ToolRecord): LendWords | null => {
     if (!live) return null;
@@ -111,7 +117,10 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
     if (found) {
       setPersonId(found.id);
       setWrong(null);
-      toolField.current?.focus();
+      lend.reset();
+      // The tool may have been scanned first.
+      if (tool) send(found, tool);
+      else toolField.current?.focus();
       return;
     }
     // A tool scanned where a person is awaited has come back: that needs no second scan.
@@ -122,7 +131,15 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
       return;
     }
     setPersonId(null);
-    setWrong({ field: 'person', words: personProblem(typedPerson, returned) });
+    if (returned) {
+      // Scanned in the wrong order: the tool goes where it belongs, the person is still awaited.
+      setTypedPerson('');
+      setTypedTool(returned.number);
+      setToolId(returned.id);
+      setWrong(null);
+      return;
+    }
+    setWrong({ field: 'person', words: personProblem(typedPerson, crib.people.values()) });
   };
   const scanTool = () => {
     if (typedTool.trim() === '') return;
@@ -141,7 +158,7 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
       setToolId(null);
       setWrong({
         field: 'tool',
-        words: `No tool has the number ${typedTool.trim()}. Look at the tag on it, such as G-07.`,
+        words: toolProblem(typedTool),
       });
       return;
     }
@@ -173,13 +190,29 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
             value={typedPerson}
             enter="next"
             error={wrong?.field === 'person' ? wrong.words : undefined}
-            hint={person ? undefined : 'Their number, from the badge or said; then Enter.'}
+            list="crib-people"
+            hint={
+              person
+                ? undefined
+                : tool
+                  ? `Now who takes ${tool.number}; then Enter.`
+                  : 'Their number, from the badge or said, or their name; then Enter.'
+            }
             onChange={(typed) => {
               setTypedPerson(typed);
               setPersonId(null);
+              // Somebody else after a refusal: the tool that was refused must not go out with them unasked.
+              if (person && tool) forgetTool();
             }}
             onScan={scanPerson}
           />
+          <datalist id="crib-people">
+            {[...crib.people.values()]
+              .filter((one) => one.onSite && !one.removed)
+              .map((one) => (
+                <option key={one.id} value={personOffer(one)} />
+              ))}
+          </datalist>
           {person && <PersonRead person={person} crib={crib} live={live} />}
         </div>
         <div>
@@ -251,60 +284,12 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
       {lent && (
         <Note
           kind="done"
-          title={`${lent.tool.number} is out with ${lent.person.name}, back by ${formatTime(lent.backBy, crib.zone)}.`}
+          title={`${lent.tool.number} is out with ${lent.person.name}, back by ${timeWords(lent.backBy, crib.now, crib.zone)}.`}
         >
           {lent.limits.length > 0 && <p>{lent.limits.map(limitWords).join(' ')}</p>}
         </Note>
       )}
       <TakenBack takeBack={takeBack} />
     </section>
-  );
-}
-
-const personProblem = (typed: string, tool: ToolRecord | null): string =>
-  tool
-    ? `${tool.number} is in the crib. Scan the person first, then the tool.`
-    : `Nobody here has the number ${typed.trim()}. Ask at the muster desk.`;
-
-/** Who was read, large enough to be seen from the other side of the counter. */
-function PersonRead({
-  person,
-  crib,
-  live,
-}: {
-  person: PersonRecord;
-  crib: Crib;
-  live: LiveState | undefined;
-}) {
-  const facts = live ? personFacts(live, person.id, crib.now) : null;
-  const has = crib.out.filter(({ checkout }) => checkout.personId === person.id);
-  const since = person.details?.confirmedAt;
-  return (
-    <div className="lend-read" role="status">
-      <p className="lend-name">{person.name}</p>
-      <p>
-        {person.onSite && since ? `on site since ${formatTime(since, crib.zone)}` : 'not on site'}
-        {person.details ? `, ${AGE_BAND_LABELS[person.details.ageBand]}` : ''}
-        {facts && facts.missing['hot-glue'] === undefined ? ', hot glue countersigned' : ''}
-      </p>
-      {has.length > 0 && <p className="text-pencil">has {has.map(({ tool }) => tool.number).join(', ')}</p>}
-    </div>
-  );
-}
-
-function ToolRead({ tool }: { tool: ToolRecord }) {
-  const facts = [
-    tool.traits.watts ? `${tool.traits.watts} W` : '',
-    tool.traits.temperature ? `${tool.traits.temperature} temperature` : '',
-    tool.hazard ? `needs ${HAZARD_LABELS[tool.hazard]}` : 'no sign-off',
-    tool.condition,
-  ].filter(Boolean);
-  return (
-    <div className="lend-read" role="status">
-      <p className="lend-name">
-        {tool.number} {tool.name}
-      </p>
-      <p>{facts.join(', ')}</p>
-    </div>
   );
 }

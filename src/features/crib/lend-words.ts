@@ -2,7 +2,8 @@ import type { PersonRecord, ToolRecord } from '../../../shared/contracts/live';
 import type { LendRefusal } from '../../../shared/crib/decide-lend';
 import { ageRefusalText, type AgeLimit } from '../../../shared/safety/age-rules';
 import { HAZARD_LABELS } from '../../../shared/safety/hazards';
-import { formatDuration, formatTime } from '../../lib/formats';
+import { formatDuration } from '../../lib/formats';
+import { timeWords } from './back-by';
 
 /** What the words of a refusal are made from. */
 export interface LendContext {
@@ -35,24 +36,25 @@ const MISSING: Record<string, string> = {
 
 export function lendWords(refusal: LendRefusal, context: LendContext): LendWords {
   const { tool, person, nameOf, now, zone } = context;
+  const time = (ms: number) => timeWords(ms, now, zone);
   const what = `${tool.number} ${tool.name}`;
   switch (refusal.code) {
     case 'TOOL_OUT_OF_USE': {
       const { reason, by, at } = refusal.details;
       return {
         title: `${tool.number} is out of use.`,
-        text: `${nameOf(by)} tagged it at ${formatTime(at, zone)}: ${reason} Lend another one.`,
+        text: `${nameOf(by)} tagged it at ${time(at)}: ${reason} Lend another one.`,
       };
     }
     case 'TOOL_OUT': {
       const { personId, outAt, backBy } = refusal.details;
       const due =
         backBy < now
-          ? `It is ${formatDuration((now - backBy) / 1000)} over its ${formatTime(backBy, zone)}.`
-          : `It is due back by ${formatTime(backBy, zone)}.`;
+          ? `It is ${formatDuration((now - backBy) / 1000)} over its ${time(backBy)}.`
+          : `It is due back by ${time(backBy)}.`;
       return {
         title: `${tool.number} is out already.`,
-        text: `${nameOf(personId)} has had it since ${formatTime(outAt, zone)}. ${due} Take it back first, or lend another one.`,
+        text: `${nameOf(personId)} has had it since ${time(outAt)}. ${due} Take it back first, or lend another one.`,
       };
     }
     case 'PERSON_NOT_CONFIRMED':

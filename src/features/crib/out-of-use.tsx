@@ -7,9 +7,10 @@ import { TextArea } from '../../components/ui/field';
 import { DimensionHead } from '../../components/ui/heads';
 import { Refusal } from '../../components/ui/refusal';
 import { OutOfUseTag } from '../../components/ui/tool-out-line';
-import { counted, formatTime } from '../../lib/formats';
+import { counted } from '../../lib/formats';
 import { membershipIn, useMay, useSession } from '../../lib/session';
 import { useForm } from '../../lib/use-form';
+import { timeWords } from './back-by';
 import type { Crib } from './use-crib';
 
 /** The tags that hang: which tool, why, who, and the way to take one off. */
@@ -30,7 +31,7 @@ export function OutOfUse({ installationId, crib }: { installationId: string; cri
               <OutOfUseTag
                 tool={`${tool.number} ${tool.name}`}
                 reason={tool.tag?.reason ?? ''}
-                detail={`${name}, ${tool.tag ? formatTime(tool.tag.at, crib.zone) : ''}. Cleared only by ${name} or a second authorised person.`}
+                detail={`${name}, ${tool.tag ? timeWords(tool.tag.at, crib.now, crib.zone) : ''}. Cleared only by ${name} or a second authorised person.`}
                 actions={
                   may('tool.clear-tag') && (
                     <Action

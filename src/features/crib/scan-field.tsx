@@ -12,18 +12,21 @@ export interface ScanFieldProps {
   /** What the key of a phone says. */
   enter: 'next' | 'go';
   capitals?: boolean;
+  /** Id of the datalist with what may be meant. */
+  list?: string;
   ref?: Ref<HTMLInputElement>;
 }
 
 /** A field for a number: typed, or scanned by something that types the number and Enter. */
 export function ScanField(props: ScanFieldProps) {
-  const { label, value, onChange, onScan, error, hint, enter, capitals = false, ref } = props;
+  const { label, value, onChange, onScan, error, hint, enter, capitals = false, list, ref } = props;
   return (
     <Field
       ref={ref}
       label={label}
       size="phone"
       value={value}
+      list={list}
       autoComplete="off"
       autoCapitalize={capitals ? 'characters' : 'none'}
       autoCorrect="off"
@@ -38,6 +41,9 @@ export function ScanField(props: ScanFieldProps) {
         if (event.key !== 'Enter') return;
         event.preventDefault();
         onScan();
+        // The focus may have stayed: then, too, the next scan writes over.
+        const field = event.currentTarget;
+        if (document.activeElement === field) field.select();
       }}
     />
   );

@@ -8,7 +8,7 @@ import { Refusal } from '../../components/ui/refusal';
 import { ApiError } from '../../lib/api';
 import { formatDuration } from '../../lib/formats';
 import { useSend } from '../../lib/use-send';
-import { readTool } from './scan';
+import { readTool, toolProblem } from './scan';
 import { ScanField } from './scan-field';
 import type { Crib } from './use-crib';
 
@@ -93,7 +93,7 @@ export function TakeBackPanel({ installationId, crib }: { installationId: string
     if (typed.trim() === '') return;
     const tool = readTool(typed, crib.tools);
     if (!tool) {
-      setWrong(`No tool has the number ${typed.trim()}. Look at the tag on it, such as G-07.`);
+      setWrong(toolProblem(typed));
       return;
     }
     if (!crib.outOf.has(tool.id)) {
