@@ -74,6 +74,12 @@ export interface BriefingTextView {
     questions: { id: string; text: string; options: { id: string; text: string }[] }[];
   };
 }
+/** The newest published version whole, with the right answers: for the safety lead who writes the next one. */
+export interface WholeVersionView {
+  version: number;
+  effectiveFrom: number;
+  body: BriefingBody;
+}
 /** Reply to an answered sheet: per question whether it was right, and why. */
 export interface AnswerResult {
   passed: boolean;

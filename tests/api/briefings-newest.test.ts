@@ -1,7 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { WholeVersionView } from '../../shared/contracts/safety';
 import { HOT_GLUE_BODY } from '../../shared/safety';
-import { signedInClient } from '../support/fixtures';
 import { openHall, type Hall } from '../support/fixtures-safety';
 
 let hall: Hall;
@@ -32,11 +31,10 @@ describe('the newest version whole', () => {
   });
 
   it('readNewestVersion > a volunteer or an organiser > NOT_ALLOWED, no right answer leaves the server; unknown key > NOT_FOUND', async () => {
-    const volunteer = await signedInClient(hall.server, hall.ines);
-    for (const client of [volunteer, hall.organiser]) {
+    for (const client of [hall.ines, hall.organiser]) {
       const reply = await read(client);
       expect([reply.status, reply.error?.code]).toEqual([403, 'NOT_ALLOWED']);
-      expect(reply.text).not.toContain('right');
+      expect(reply.text).not.toContain('"right"');
     }
     expect((await read(hall.lead, 'no-such')).error?.code).toBe('NOT_FOUND');
   });

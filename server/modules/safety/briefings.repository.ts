@@ -1,5 +1,9 @@
 import type Database from 'better-sqlite3';
-import type { BriefingTextView, ProposedVersionView } from '../../../shared/contracts/safety';
+import type {
+  BriefingTextView,
+  ProposedVersionView,
+  WholeVersionView,
+} from '../../../shared/contracts/safety';
 import { currentVersion, questionSheet, type BriefingBody, type VersionKind } from '../../../shared/safety';
 import { prepared } from '../../realtime/live-source';
 
@@ -56,6 +60,21 @@ export function readBriefingText(
     effectiveFrom: text.effective_from,
     whatChanged: text.what_changed,
     body: { ...body, questions: questionSheet(body) },
+  };
+}
+
+/** The newest published version with its right answers; null when there is no such briefing. */
+export function readNewestVersion(
+  db: Database.Database,
+  installationId: string,
+  key: string,
+): WholeVersionView | null {
+  const newest = readTexts(db, installationId, key).findLast((text) => text.status === 'published');
+  if (!newest) return null;
+  return {
+    version: newest.version,
+    effectiveFrom: newest.effective_from,
+    body: JSON.parse(newest.body) as BriefingBody,
   };
 }
 

@@ -13,7 +13,7 @@ import { notFound } from '../../http/app-error';
 import type { Actor } from '../../http/principal';
 import { route, type AnyRoute } from '../../http/route';
 import { answerSheet, signBriefing } from './answers.service';
-import { readBriefingText, readProposals, readSignature } from './briefings.repository';
+import { readBriefingText, readNewestVersion, readProposals, readSignature } from './briefings.repository';
 import { proposeVersion } from './briefings.service';
 import { secondCorrection, withdrawProposal } from './corrections.service';
 import { countersignSignOff, noteTalk, revokeSignOff } from './sign-offs.service';
@@ -126,6 +126,16 @@ const versionRoutes = (deps: Deps): AnyRoute[] => [
     handle: ({ write, actor, installationId, params, body }) => {
       const leadId = personOf(actor);
       return write((scope) => proposeVersion(scope, installationId, leadId, keyOf(params), body));
+    },
+  }),
+  route({
+    method: 'get',
+    path: `${BRIEFING}/versions`,
+    action: 'briefing.edit',
+    handle: ({ installationId, params }) => {
+      const newest = readNewestVersion(deps.data.readHandle, installationId, keyOf(params));
+      if (!newest) throw notFound();
+      return { data: newest };
     },
   }),
   route({
