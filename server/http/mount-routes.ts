@@ -38,12 +38,7 @@ export function mountRoutes(router: Router, routes: readonly AnyRoute[], deps: M
   }
 }
 
-async function serve(
-  spec: RouteSpec,
-  deps: MountDeps,
-  req: Request,
-  res: Response,
-): Promise<void> {
+async function serve(spec: RouteSpec, deps: MountDeps, req: Request, res: Response): Promise<void> {
   const principal = principalOf(req);
   const params = req.params as Record<string, string>;
   const installationId = params.installationId;
@@ -122,12 +117,7 @@ function checked<T>(schema: z.ZodType<T>, input: unknown): T {
 
 const KEY_FORM = /^[\w-]{8,100}$/;
 
-function keyOf(
-  req: Request,
-  spec: RouteSpec,
-  params: Record<string, string>,
-  body: unknown,
-): Idempotency {
+function keyOf(req: Request, spec: RouteSpec, params: Record<string, string>, body: unknown): Idempotency {
   const key = req.get('idempotency-key') ?? '';
   if (!KEY_FORM.test(key)) {
     throw new AppError(

@@ -12,7 +12,6 @@ export const createFrameSchema = z.discriminatedUnion('kind', [
     text: z.string().max(2_200_000),
   }),
 ]);
-export const editFrameSchema = createFrameSchema;
 export type CreateFrame = z.infer<typeof createFrameSchema>;
 
 /** A frame with its geometry and figures; mm throughout. */

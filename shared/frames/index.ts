@@ -1,12 +1,12 @@
-export { cutCount, glueEnds, jointCount, SAME_WITHIN_MM, strutLengths } from './frame';
+export { cutCount, glueEnds, jointCount, strutLengths } from './frame';
 export type { Frame, Joint, Strut } from './frame';
 export { frameFigures } from './frame-figures';
 export type { FrameFigures, LengthClass } from './frame-figures';
 export { dihedralAngles } from './dihedral';
 export type { Dihedral } from './dihedral';
-export { FRAME_LIMITS, validateFrame } from './validate-frame';
+export { validateFrame } from './validate-frame';
 export type { FrameProblem, FrameProblemCode } from './validate-frame';
-export { SHAPE_LIMITS, shapeSchema } from './shape-schema';
+export { shapeSchema } from './shape-schema';
 export type { Shape } from './shape-schema';
 export { buildShape } from './shapes';
 export { formatObj, OBJ_MOST_BYTES, parseObj } from './obj';

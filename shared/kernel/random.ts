@@ -1,5 +1,3 @@
-import type { RandomBytes } from './ids';
-
 /** A seeded stream of numbers in [0, 1). */
 export type Random = () => number;
 
@@ -16,9 +14,4 @@ export function seededRandom(seed: number): Random {
     t ^= t + Math.imul(t ^ (t >>> 7), t | 61);
     return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
   };
-}
-
-/** Bytes from a seeded stream, for ids that must be the same on every run of the demo. */
-export function seededBytes(random: Random): RandomBytes {
-  return (length) => Uint8Array.from({ length }, () => Math.floor(random() * 256));
 }

@@ -73,9 +73,6 @@ export const MAKE_SAFE_KEYS = [
 ] as const;
 export type MakeSafeKey = (typeof MAKE_SAFE_KEYS)[number];
 
-/** What leads read besides: a screen is not heard over a saw. */
-export const LEADS_SHOUT_KEY = 'stop.leads.shout';
-
 const HOT_STEPS: readonly MakeSafeKey[] = [
   'stop.make-safe.gun-in-stand',
   'stop.make-safe.pull-plug',

@@ -1,4 +1,4 @@
-import { createFrameSchema, editFrameSchema, type CreateFrame } from '../../../shared/contracts/frames';
+import { createFrameSchema, type CreateFrame } from '../../../shared/contracts/frames';
 import type { Deps } from '../../deps';
 import { route, type AnyRoute } from '../../http/route';
 import { framesOf } from './frames.repository';
@@ -28,7 +28,7 @@ export const framesRoutes = (deps: Deps): AnyRoute[] => [
     method: 'put',
     path: '/installations/:installationId/frames/:frameId',
     action: 'frame.edit',
-    body: editFrameSchema,
+    body: createFrameSchema,
     bodyLimit: OBJ_BODY_BYTES,
     handle: ({ installationId, params, body, write }) =>
       write((scope) => editFrame(scope, installationId, params.frameId ?? '', body)),

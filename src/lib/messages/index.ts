@@ -11,14 +11,8 @@ type Wording<T> = T extends (...values: infer V) => string
 /** The catalogue every language has to fill, entry by entry. */
 export type Messages = Wording<typeof en>;
 
-/** A further language is one more entry here; the compiler then asks for every one of its texts. */
-const CATALOGUES = { en } satisfies Record<string, Messages>;
-export type Language = keyof typeof CATALOGUES;
-
-export const catalogue = (language: Language): Messages => CATALOGUES[language];
-
-/** Provide `catalogue(language)` round the application when there is a choice; English without. */
-export const MessagesContext = createContext<Messages>(en);
+/** The words of the page; a further language is another value of type `Messages`, provided round the application. */
+const MessagesContext = createContext<Messages>(en);
 
 /** The volunteers' words in the reader's language. */
 export const useMessages = (): Messages => use(MessagesContext);
