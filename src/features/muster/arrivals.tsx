@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useId, useRef, useState } from 'react';
 import type { PersonRecord } from '../../../shared/contracts/live';
 import { AGE_BAND_LABELS, AGE_BANDS, type AgeBand } from '../../../shared/safety/hazards';
 import { Action } from '../../components/ui/action';
@@ -91,6 +91,8 @@ function Arrival({ installationId, person, present, now, full }: ArrivalProps) {
   const [adultName, setAdultName] = useState(named);
   const [pressed, setPressed] = useState<AgeBand | null>(null);
   const confirm = useSend();
+  const sending = useRef(false);
+  const adultId = useId();
   const problem =
     confirm.error instanceof ApiError
       ? confirm.error.fields.find(({ path }) => path === 'adultName')?.message
@@ -98,14 +100,26 @@ function Arrival({ installationId, person, present, now, full }: ArrivalProps) {
   const asksAdult = said !== '18+' || problem !== undefined;
   const adult = adultOnSite(adultName, present);
   const press = (ageBand: AgeBand) => {
-    if (confirm.isPending) return;
+    // Once it is accepted the row waits for the live state to say so: a second press would be refused.
+    if (sending.current) return;
+    sending.current = true;
     setPressed(ageBand);
-    confirm.mutate({
-      method: 'POST',
-      path: `/installations/${installationId}/people/${person.id}/confirm`,
-      body: { ageBand, ...(ageBand === '18+' || adultName.trim() === '' ? {} : { adultName }) },
-    });
+    confirm.mutate(
+      {
+        method: 'POST',
+        path: `/installations/${installationId}/people/${person.id}/confirm`,
+        body: { ageBand, ...(ageBand === '18+' || adultName.trim() === '' ? {} : { adultName }) },
+      },
+      {
+        onError: () => {
+          sending.current = false;
+        },
+      },
+    );
   };
+  useEffect(() => {
+    if (problem !== undefined) document.getElementById(adultId)?.focus();
+  }, [problem, adultId]);
   const since = person.details ? (now - person.details.joinedAt) / 1000 : 0;
   return (
     <li className="arrival" aria-label={person.name}>
@@ -126,6 +140,7 @@ function Arrival({ installationId, person, present, now, full }: ArrivalProps) {
       <div className="arrival-confirm">
         {asksAdult && (
           <Field
+            id={adultId}
             label="the adult with them, first name and initial"
             value={adultName}
             list={`adults-${person.id}`}
@@ -155,7 +170,7 @@ function Arrival({ installationId, person, present, now, full }: ArrivalProps) {
               size="phone"
               look={band === said ? 'main' : 'plain'}
               label={`${AGE_BAND_LABELS[band]}: confirm ${person.name}`}
-              busy={confirm.isPending && pressed === band}
+              busy={(confirm.isPending || confirm.isSuccess) && pressed === band}
               disabled={full}
               onClick={() => press(band)}
             >
