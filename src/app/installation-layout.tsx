@@ -7,6 +7,7 @@ import { PhoneFrame } from '../components/layout/phone-frame';
 import { Action } from '../components/ui/action';
 import { DayRuler } from '../components/ui/day-ruler';
 import { Pending } from '../components/ui/pending';
+import { RaiseStop } from '../features/stop/raise-stop';
 import { StopNow } from '../features/stop/stop-now';
 import { send } from '../lib/api';
 import { formatCalendarDay, formatTime } from '../lib/formats';
@@ -126,7 +127,12 @@ function Desk({
         revision,
         link: linkState,
         who: [who, ...duties.slice(0, 2)].filter(Boolean).join(', '),
-        more: <MyThings />,
+        more: (
+          <>
+            <RaiseStop installationId={installationId} size="desk" />
+            <MyThings />
+          </>
+        ),
       }}
       ruler={handle.day ? <Ruler installationId={installationId} /> : undefined}
       stop={<StopNow installationId={installationId} />}
