@@ -8,19 +8,20 @@ import type { Vector } from './vector';
  * @returns an index per point: its own when it is the first at its place
  */
 export function firstAtPlace(points: readonly (Vector | null)[], within: number): number[] {
+  // Cells wider than the tolerance: most points then look into one cell, those near a wall into two, four or eight.
+  const side = 4 * within;
+  const cell = (value: number) => Math.floor(value / side);
   const cells = new Map<string, number[]>();
-  const cell = (value: number) => Math.floor(value / within);
   return points.map((point, index) => {
     if (!point) return index;
-    const [cx, cy, cz] = [cell(point.x), cell(point.y), cell(point.z)];
     let found = index;
-    for (let dx = -1; dx <= 1; dx++)
-      for (let dy = -1; dy <= 1; dy++)
-        for (let dz = -1; dz <= 1; dz++)
-          for (const other of cells.get(`${cx + dx},${cy + dy},${cz + dz}`) ?? [])
+    for (let x = cell(point.x - within); x <= cell(point.x + within); x++)
+      for (let y = cell(point.y - within); y <= cell(point.y + within); y++)
+        for (let z = cell(point.z - within); z <= cell(point.z + within); z++)
+          for (const other of cells.get(`${x},${y},${z}`) ?? [])
             if (other < found && distance(points[other]!, point) < within) found = other;
     if (found === index) {
-      const key = `${cx},${cy},${cz}`;
+      const key = `${cell(point.x)},${cell(point.y)},${cell(point.z)}`;
       const list = cells.get(key);
       if (list) list.push(index);
       else cells.set(key, [index]);
