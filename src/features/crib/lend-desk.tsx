@@ -196,7 +196,7 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
                 ? undefined
                 : tool
                   ? `Now who takes ${tool.number}; then Enter.`
-                  : 'Their number, from the badge or said, or their name; then Enter.'
+                  : 'Their number or name; then Enter.'
             }
             onChange={(typed) => {
               setTypedPerson(typed);
@@ -234,12 +234,17 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
         </div>
       </div>
       <div className="lend-how">
-        <ChoiceRow
-          label="Back by"
-          choices={choices.map((value) => ({ value, label: BACK_BY_WORDS[value] }))}
-          value={due}
-          onChange={setBackBy}
-        />
+        <div>
+          <span className="field-label" aria-hidden="true">
+            back by
+          </span>
+          <ChoiceRow
+            label="Back by"
+            choices={choices.map((value) => ({ value, label: BACK_BY_WORDS[value] }))}
+            value={due}
+            onChange={setBackBy}
+          />
+        </div>
         <SelectField
           label="where it goes"
           size="phone"

@@ -50,7 +50,7 @@ export function ToolsList({ installationId, crib }: { installationId: string; cr
           title={crib.tools.length === 0 ? 'No tools on the list yet.' : 'No tool is called that.'}
         />
       ) : (
-        <Sheet caption="All tools" rows="fixed">
+        <Sheet caption="All tools" rows="fixed" className="flowing">
           <thead>
             <tr>
               <th scope="col">number</th>
@@ -67,7 +67,7 @@ export function ToolsList({ installationId, crib }: { installationId: string; cr
             {shown.map((tool) => (
               <tr key={tool.id}>
                 <th scope="row">{tool.number}</th>
-                <td data-label="tool">{tool.name}</td>
+                <td>{tool.name}</td>
                 <td data-label="sign-off">{tool.hazard ? HAZARD_LABELS[tool.hazard] : 'none'}</td>
                 <td data-label="condition">{tool.condition}</td>
                 <td data-label="where">

@@ -21,7 +21,7 @@ export function WhoHasWhat({ crib }: { crib: Crib }) {
       {out.length === 0 ? (
         <EmptyNote title="Every tool is in the crib." />
       ) : (
-        <Sheet caption="Tools that are out" rows="fixed" className="tools-out">
+        <Sheet caption="Tools that are out" rows="fixed" className="tools-out flowing">
           <thead>
             <tr>
               <th scope="col">number</th>
@@ -40,7 +40,7 @@ export function WhoHasWhat({ crib }: { crib: Crib }) {
             {out.map(({ checkout, tool, late }) => (
               <tr key={checkout.id}>
                 <th scope="row">{tool.number}</th>
-                <td data-label="tool">{tool.name}</td>
+                <td>{tool.name}</td>
                 <td data-label="with">
                   {nameOf(checkout.personId)}
                   {checkout.stationId && `, at ${stationName(checkout.stationId)}`}

@@ -1,3 +1,4 @@
+import { Action } from '../../components/ui/action';
 import { BigCode } from '../../components/ui/big-code';
 import { DimensionHead } from '../../components/ui/heads';
 import { Pending } from '../../components/ui/pending';
@@ -17,10 +18,12 @@ export function Latecomers({ installationId }: { installationId: string }) {
       {code.data && (
         <>
           <BigCode code={code.data.joinCode} />
-          <p className="text-pencil">
-            On their own phone:{' '}
-            <a href={code.data.joinUrl}>{code.data.joinUrl.replace(/^https?:\/\//, '')}</a>
-          </p>
+          <p className="text-pencil">On their own phone they type it in, or open</p>
+          <div className="break-all">
+            <Action look="words" href={code.data.joinUrl}>
+              {code.data.joinUrl.replace(/^https?:\/\//, '')}
+            </Action>
+          </div>
         </>
       )}
     </section>

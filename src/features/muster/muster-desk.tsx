@@ -40,12 +40,6 @@ export function MusterDesk({ installationId }: { installationId: string }) {
             </DimensionHead>
             <Arrivals {...{ installationId, waiting, present, zone, now, full }} />
           </section>
-          <section aria-labelledby="muster-present">
-            <DimensionHead id="muster-present" right={counted(present.length, 'person', 'people')}>
-              On site
-            </DimensionHead>
-            <OnSite {...{ installationId, present, zone }} maySignOut={may('person.sign-out-site')} />
-          </section>
         </div>
         <aside className="muster-side">
           <section aria-labelledby="muster-count">
@@ -56,6 +50,14 @@ export function MusterDesk({ installationId }: { installationId: string }) {
           </section>
           {may('installation.read-code') && <Latecomers installationId={installationId} />}
           <Duties presence={presence} />
+        </aside>
+        <div className="muster-rest">
+          <section aria-labelledby="muster-present">
+            <DimensionHead id="muster-present" right={counted(present.length, 'person', 'people')}>
+              On site
+            </DimensionHead>
+            <OnSite {...{ installationId, present, zone }} maySignOut={may('person.sign-out-site')} />
+          </section>
           {gone.length > 0 && (
             <section aria-labelledby="muster-gone">
               <DimensionHead id="muster-gone" right={counted(gone.length, 'person', 'people')}>
@@ -64,7 +66,7 @@ export function MusterDesk({ installationId }: { installationId: string }) {
               <Gone {...{ installationId, gone, zone, full }} />
             </section>
           )}
-        </aside>
+        </div>
       </div>
     </>
   );

@@ -47,7 +47,7 @@ export function OnSite({
       {shown.length === 0 ? (
         <EmptyNote title={present.length === 0 ? 'Nobody is on site yet.' : 'Nobody here has this name.'} />
       ) : (
-        <Sheet caption="People on site" rows="fixed" className="muster-sheet">
+        <Sheet caption="People on site" rows="fixed" className="flowing">
           <thead>
             <tr>
               <th scope="col">number</th>
@@ -65,17 +65,17 @@ export function OnSite({
           <tbody>
             {shown.map((person) => (
               <tr key={person.id}>
-                <td data-label="number">{person.number}</td>
+                <td>{person.number}</td>
                 <th scope="row">{person.name}</th>
-                <td data-label="age band">
+                <td>
                   <Band person={person} present={present} />
                 </td>
-                <td data-label="duties">{person.duties.filter((duty) => duty !== 'volunteer').join(', ')}</td>
+                <td>{person.duties.filter((duty) => duty !== 'volunteer').join(', ')}</td>
                 <td data-label="since">
                   {person.details?.confirmedAt ? formatTime(person.details.confirmedAt, zone) : ''}
                 </td>
                 {maySignOut && (
-                  <td className="amount">
+                  <td className="amount beside">
                     <SignOut
                       installationId={installationId}
                       person={person}
