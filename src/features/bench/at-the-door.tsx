@@ -8,7 +8,6 @@ interface Props {
   installationId: string;
   me: PersonRecord | undefined;
   state: LiveState;
-  now: number;
 }
 
 /** Joined, not confirmed yet (or gone home): the desk comes first; briefings can be read meanwhile. */

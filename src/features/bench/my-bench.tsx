@@ -36,8 +36,7 @@ export function MyBench({ installationId, personId }: Props) {
   if (!mine) return <Pending />;
   const me = mine.state.records.people.get(personId);
   const names = benchNames(mine.state, messages);
-  if (!me?.confirmed)
-    return <AtTheDoor installationId={installationId} me={me} state={mine.state} now={mine.now} />;
+  if (!me?.confirmed) return <AtTheDoor installationId={installationId} me={me} state={mine.state} />;
   return <Confirmed installationId={installationId} personId={personId} mine={mine} names={names} />;
 }
 
@@ -109,46 +108,65 @@ interface CanTakeProps {
 }
 
 function CanTake({ mine, names, command, offline, asOf }: CanTakeProps) {
-  const { bench: words, common } = useMessages();
+  const { bench: words } = useMessages();
   const [all, setAll] = useState(false);
-  // A place lost a moment ago stays in the list, struck, so that nothing jumps under a thumb.
   const wanted = new Set(mine.handsWanted.map((step) => step.id));
-  const entries = [
-    ...mine.canTake.filter(({ step }) => wanted.has(step.id)),
-    ...mine.canTake.filter(({ step }) => !wanted.has(step.id)),
-  ];
+  const hands = mine.handsWanted.flatMap((step) => mine.canTake.filter((entry) => entry.step.id === step.id));
+  const entries = mine.canTake.filter(({ step }) => !wanted.has(step.id));
   const shown = all ? entries : entries.slice(0, FIRST);
+  const row = (entry: BenchEntry, first: boolean) => (
+    <TakeRow
+      key={entry.step.id}
+      entry={entry}
+      first={first}
+      names={names}
+      command={command}
+      offline={offline}
+    />
+  );
   return (
-    <section aria-labelledby="bench-next">
-      <DimensionHead
-        id="bench-next"
-        right={offline && asOf !== null ? words.offline.asItWas(formatTime(asOf, names.zone)) : undefined}
-      >
-        {words.next}
-      </DimensionHead>
-      {entries.length === 0 && <EmptyNote title={words.nothingNext}>{words.nothingNextText}</EmptyNote>}
-      {offline && entries.length > 0 && <p className="mt-3">{words.offline.takingNeeds}</p>}
-      <ul>
-        {shown.map((entry, index) => (
-          <TakeRow
-            key={entry.step.id}
-            entry={entry}
-            first={index === 0}
-            names={names}
-            command={command}
-            offline={offline}
-          />
-        ))}
-      </ul>
-      {shown.length < entries.length && (
-        <Action look="words" onClick={() => setAll(true)}>
-          {words.showAll(entries.length)}
-        </Action>
+    <>
+      {hands.length > 0 && (
+        <section aria-labelledby="bench-hands">
+          <DimensionHead id="bench-hands">{words.handsWanted}</DimensionHead>
+          <ul>{hands.map((entry) => row(entry, false))}</ul>
+        </section>
       )}
-      <span className="sr-only" role="status">
-        {common.places(entries.length)}
-      </span>
-    </section>
+      <section aria-labelledby="bench-next">
+        <DimensionHead
+          id="bench-next"
+          right={offline && asOf !== null ? words.offline.asItWas(formatTime(asOf, names.zone)) : undefined}
+        >
+          {words.next}
+        </DimensionHead>
+        {entries.length === 0 && <EmptyNote title={words.nothingNext}>{words.nothingNextText}</EmptyNote>}
+        {offline && entries.length > 0 && <p className="mt-3">{words.offline.takingNeeds}</p>}
+        <ul>
+          <LostRow command={command} names={names} />
+          {shown.map((entry, index) => row(entry, index === 0))}
+        </ul>
+        {shown.length < entries.length && (
+          <Action look="words" onClick={() => setAll(true)}>
+            {words.showAll(entries.length)}
+          </Action>
+        )}
+      </section>
+    </>
+  );
+}
+
+/** A place lost a moment ago stays in the list, struck, so that it is not looked for. */
+function LostRow({ command, names }: Pick<CanTakeProps, 'command' | 'names'>) {
+  const { bench: words } = useMessages();
+  const { outcome } = command;
+  const step = outcome?.kind === 'taken' ? names.stepById(outcome.stepId) : undefined;
+  const holder = step?.crew.at(-1);
+  if (!step || !holder) return null;
+  return (
+    <li className="flex items-center justify-between gap-4 border-b border-rule py-4 text-pencil">
+      <s className="bench-what">{names.whatOf(step)}</s>
+      <span>{words.lost.has(names.personName(holder.personId))}</span>
+    </li>
   );
 }
 

@@ -50,9 +50,12 @@ export function useMyBench(installationId: string, personId: string): MyBench | 
     );
     const mine = travellers.flatMap(({ steps }) => steps).filter((step) => step.doers.includes(personId));
     const drying = mine.filter((step) => step.state === 'drying');
+    const here = new Set(sorted.inHand.map((step) => step.stationId));
+    // Nearby first: where this person stands already.
     const handsWanted = sorted.canTake
       .filter(({ step }) => step.state === 'in hand' && step.crew.length < step.crewMin)
-      .map(({ step }) => step as StepRecord);
+      .map(({ step }) => step as StepRecord)
+      .sort((a, b) => Number(here.has(b.stationId)) - Number(here.has(a.stationId)));
     return { ...sorted, now, state, drying, handsWanted };
   }, [state, personId, now]);
 }

@@ -54,7 +54,6 @@ export const bench = {
         : `${counted(steps, 'step')} ${steps === 1 ? 'waits' : 'wait'} behind it.`,
     handsWanted: (hands: number) => `${counted(hands, 'hand')} wanted to start.`,
     rework: (reason: string) => `To do again: ${reason}`,
-    nearby: 'At your station.',
   },
   notYet: 'Not yet',
   notYetCount: (count: number) => counted(count, 'step'),
@@ -106,12 +105,5 @@ export const bench = {
     asItWas: (time: string) => `as it was at ${time}`,
     takingNeeds:
       'Taking needs the network: a place goes to whoever asks first. Or go to the muster desk, they can take it for you.',
-  },
-  call: {
-    action: 'Call for help',
-    material: 'Material',
-    check: 'A check',
-    help: 'A hand',
-    injury: 'Somebody is hurt',
   },
 };

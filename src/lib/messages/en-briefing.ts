@@ -10,7 +10,6 @@ export const briefing = {
   version: (version: number, time: string) => `version ${version}, from ${time}`,
   changed: (what: string) => `New: ${what}`,
   minutes: (minutes: number) => `about ${counted(minutes, 'minute')} to read, answer and sign`,
-  iHaveRead: 'I have read it',
   questions: 'Question sheet',
   rightOf: (right: number, all: number) => `${right} of ${all} right`,
   hand: 'Hand in',

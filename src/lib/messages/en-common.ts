@@ -48,11 +48,9 @@ export const common = {
   screensLabel: 'Screens',
   skip: 'Go to the content',
   pending: 'One moment',
-  tryAgain: 'Try again',
   back: 'Back',
   close: 'Close',
   cancel: 'Leave it',
-  mayStayEmpty: 'may stay empty',
   link: {
     live: (time: string) => `live, ${time}`,
     broken: 'no network',
@@ -62,12 +60,4 @@ export const common = {
   someone: 'somebody',
   /** When no better words are known: what happened, what it means, what to do. */
   failed: 'That did not work. Nothing was changed. Try again, or ask the muster desk.',
-  signedOut: {
-    title: 'You are signed out.',
-    text: 'Your place on the list is kept. Join again with the code on the poster, or ask the muster desk for a one-time code.',
-  },
-  oldPage: {
-    title: 'This page is old.',
-    text: 'Somebody changed it meanwhile. It shows the newest now; look again before you go on.',
-  },
 };

@@ -26,8 +26,6 @@ export const door = {
   comeIn: 'Come in',
   noPassword: 'No password today. The wall and the board show your first name and initial, nothing else.',
   signIn: 'I have an account',
-  returning: 'Lost your phone, or joined on another one?',
-  oneTimeCode: 'Use a one-time code from the desk',
   waiting: {
     title: 'Go to the muster desk.',
     text: (name: string) =>
@@ -36,6 +34,4 @@ export const door = {
     read: 'Read a briefing',
   },
   confirmed: (name: string) => `Welcome, ${name}. You can take work now.`,
-  hallFull: (limit: number) =>
-    `The hall is full: ${limit} people are on site, and no more may be. Wait at the muster desk; they let you in when somebody leaves.`,
 };

@@ -4,7 +4,6 @@ import { counted, listed } from '../formats';
 export const refusals = {
   titles: {
     notYet: (what: string) => `${what}: not yet.`,
-    notNow: 'Not now.',
   },
   STEP_CREW_FULL: (what: string, places: number, names: readonly string[]) =>
     `${what} has ${counted(places, 'place')}, and ${names.length > 0 ? listed(names) : 'somebody'} ${names.length > 1 ? 'have' : 'has'} ${places === 1 ? 'it' : 'them'}. Take another step.`,
@@ -40,7 +39,6 @@ export const refusals = {
     AGE_NOT_CONFIRMED: () => 'The muster desk has not confirmed your age yet. Go there and say your name.',
     NO_BRIEFING: (hazard: string) => `There is no ${hazard} briefing here yet. Ask a safety lead.`,
     read: (hazard: string) => `Read the ${hazard} briefing`,
-    findLead: 'Find a safety lead',
   },
   AGE_RULE: {
     'powered-saw': (from: number) => `Powered saws are for ${from} and over.`,
@@ -53,7 +51,6 @@ export const refusals = {
     'solvent-spray': (from: number) => `Spraying is for ${from} and over.`,
     overhead: (from: number) => `Overhead work is for ${from} and over.`,
     other: 'This is not for your age.',
-    unknown: 'Nobody has written down how hot or high this tool is, so the stricter rule counts.',
     instead: (things: readonly string[]) => `You may do ${listed(things)}.`,
   },
   STOP_ACTIVE: 'A stop covers it. Make safe, and wait until a safety lead lifts the stop.',
@@ -62,8 +59,6 @@ export const refusals = {
   PERSON_NOT_ON_SITE: 'You are signed out for today. Go to the muster desk to come in again.',
   CHECKER_DID_WORK: (what: string) => `You worked on ${what}, so a second person has to check it.`,
   CHECKER_NEEDED: 'Checks are for bench leads and checkers. Ask one of them to look at it.',
-  askSecond: 'Ask for a second person',
-  findPerson: (name: string, station: string) => `Find ${name} at ${station}`,
   HAND_OVER_NOT_OFFERED: 'It is not offered to you any more. Ask the person who had it.',
   HAND_OVER_TO_SELF: 'They have a place on it already. Choose somebody else.',
   OFFLINE_CLAIM_EXPIRED:

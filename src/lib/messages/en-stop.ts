@@ -27,13 +27,11 @@ export const stop = {
     reason: 'What is wrong?',
     reasonHint: 'A few words: smoke at glue 2.',
     now: 'Stop it now',
-    already: 'This is stopped already. Everybody sees it.',
     failedOffline: 'There is no network: this stop has not gone out. Shout, and run to a safety lead.',
   },
   lift: {
     action: 'Lift the stop',
     note: 'what was done about it',
-    onlyLead: 'Only a safety lead can lift a stop.',
   },
   lifted: (name: string, time: string, note: string) => `${name} lifted the stop at ${time}: ${note}`,
 };
