@@ -35,7 +35,13 @@ export function Counters({ rows, filter, onChange }: FilterProps & { rows: reado
 }
 
 /** The marks and their words; each also shows only the travellers in that state. */
-export function Legend({ filter, onChange, shown, all }: FilterProps & { shown: number; all: number }) {
+export function Legend({
+  filter,
+  onChange,
+  shown,
+  all,
+  reset,
+}: FilterProps & { shown: number; all: number; reset: boolean }) {
   return (
     <div className="board-legend">
       <div className="board-legend-states" role="group" aria-label="Marks; choose one to see only those">
@@ -49,10 +55,23 @@ export function Legend({ filter, onChange, shown, all }: FilterProps & { shown: 
           />
         ))}
       </div>
-      <p className="board-legend-count" role="status">
-        {shown === all ? counted(all, 'traveller') : `${shown} of ${counted(all, 'traveller')}`}
-      </p>
+      <div className="board-legend-end">
+        {reset && <ShowAll filter={filter} onChange={onChange} />}
+        <p className="board-legend-count" role="status">
+          {shown === all ? counted(all, 'traveller') : `${shown} of ${counted(all, 'traveller')}`}
+        </p>
+      </div>
     </div>
+  );
+}
+
+/** The way back from every filter; there only while one is set. */
+function ShowAll({ filter, onChange }: FilterProps) {
+  if (filter.stationId === null && filter.state === null && filter.piece === '') return null;
+  return (
+    <Action look="words" onClick={() => onChange({ stationId: null, state: null, piece: '' })}>
+      Show all
+    </Action>
   );
 }
 
@@ -77,13 +96,13 @@ function StateChoice({ state, words, chosen, onChoose }: StateChoiceProps) {
   );
 }
 
-/** The field for a code, on a narrow page the stations as well, and the way back to all. */
+/** The field for a code; on a narrow page the stations as well. */
 export function FilterLine({
   filter,
   onChange,
   stations,
-}: FilterProps & { stations: readonly StationRecord[] | null }) {
-  const narrowed = filter.stationId !== null || filter.state !== null || filter.piece !== '';
+  reset,
+}: FilterProps & { stations: readonly StationRecord[] | null; reset: boolean }) {
   return (
     <div className="board-filters">
       <Field
@@ -108,11 +127,7 @@ export function FilterLine({
           ))}
         </SelectField>
       )}
-      {narrowed && (
-        <Action look="words" onClick={() => onChange({ stationId: null, state: null, piece: '' })}>
-          Show all
-        </Action>
-      )}
+      {reset && <ShowAll filter={filter} onChange={onChange} />}
     </div>
   );
 }

@@ -41,6 +41,8 @@ export function TravellersBoard({ installationId }: { installationId: string }) 
   );
   const mostSteps = groups.reduce((most, group) => Math.max(most, group.columns.length), 1);
   const layout = boardLayout(width, mostSteps);
+  // On a desk the way back stands at the foot: in the head it would push the sheet down.
+  const wide = layout.kind === 'wide';
   const passed = rows.reduce((sum, row) => sum + row.steps.filter(isPassed).length, 0);
   const all = rows.reduce((sum, row) => sum + row.steps.length, 0);
   const opened = rows.find((row) => row.piece.code === filter.open);
@@ -58,6 +60,7 @@ export function TravellersBoard({ installationId }: { installationId: string }) 
               filter={filter}
               onChange={change}
               stations={layout.kind === 'narrow' ? liveStations : null}
+              reset={!wide}
             />
             <Counters rows={rows} filter={filter} onChange={change} />
           </>
@@ -79,7 +82,7 @@ export function TravellersBoard({ installationId }: { installationId: string }) 
             Take a filter off and the others are there again.
           </EmptyNote>
         )}
-        <Legend filter={filter} onChange={change} shown={shown.size} all={rows.length} />
+        <Legend filter={filter} onChange={change} shown={shown.size} all={rows.length} reset={wide} />
       </div>
       {opened && (
         <TravellerPanel
