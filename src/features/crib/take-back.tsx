@@ -20,8 +20,15 @@ interface Taken {
   tagged: boolean;
 }
 
+interface HowBack {
+  condition: string;
+  tagReason: string | null;
+  /** Called once it is back. */
+  onBack?: () => void;
+}
+
 export interface TakeBack {
-  take: (tool: ToolRecord, how?: { condition: string; tagReason: string | null }) => void;
+  take: (tool: ToolRecord, how?: HowBack) => void;
   /** The last tool that came back, until forgotten. */
   taken: Taken | null;
   error: unknown;
@@ -41,20 +48,26 @@ export function useTakeBack(installationId: string, crib: Crib): TakeBack {
       setTaken(null);
       send.reset();
     },
-    take: (tool, how = { condition: '', tagReason: null }) => {
+    take: (tool, { condition, tagReason, onBack } = { condition: '', tagReason: null }) => {
       if (send.isPending) return;
       const checkout = crib.outOf.get(tool.id);
       setTaken(null);
       send.mutate(
-        { method: 'POST', path: `/installations/${installationId}/tools/${tool.id}/take-back`, body: how },
         {
-          onSuccess: () =>
+          method: 'POST',
+          path: `/installations/${installationId}/tools/${tool.id}/take-back`,
+          body: { condition, tagReason },
+        },
+        {
+          onSuccess: () => {
+            onBack?.();
             setTaken({
               tool,
               from: checkout ? crib.nameOf(checkout.personId) : '',
               lateMs: checkout ? Math.max(0, crib.now - checkout.backBy) : 0,
-              tagged: how.tagReason !== null,
-            }),
+              tagged: tagReason !== null,
+            });
+          },
         },
       );
     },
@@ -89,6 +102,13 @@ export function TakeBackPanel({ installationId, crib }: { installationId: string
     unsafe && takeBack.error instanceof ApiError
       ? takeBack.error.fields.find(({ path }) => path === 'tagReason')?.message
       : undefined;
+  const clear = () => {
+    setTyped('');
+    setCondition('');
+    setUnsafe(false);
+    setReason('');
+    field.current?.focus();
+  };
   const scan = () => {
     if (typed.trim() === '') return;
     const tool = readTool(typed, crib.tools);
@@ -101,12 +121,8 @@ export function TakeBackPanel({ installationId, crib }: { installationId: string
       return;
     }
     setWrong(undefined);
-    takeBack.take(tool, { condition, tagReason: unsafe ? reason : null });
-    if (unsafe && reason.trim().length < 3) return;
-    setTyped('');
-    setCondition('');
-    setUnsafe(false);
-    setReason('');
+    // What was typed stays until the tool is back: a refusal or a broken network loses nothing.
+    takeBack.take(tool, { condition, tagReason: unsafe ? reason : null, onBack: clear });
   };
   return (
     <section aria-label="Take back a tool" className="take-back">

@@ -133,7 +133,7 @@ export function ToolForm({ installationId, tool, kinds, onClose }: ToolFormProps
             <option value="low">low</option>
           </SelectField>
           <Field
-            label="ladder, standing height"
+            label="ladder height"
             optional
             unit="mm"
             inputMode="numeric"

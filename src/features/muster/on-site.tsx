@@ -80,7 +80,10 @@ export function OnSite({
                       installationId={installationId}
                       person={person}
                       present={present}
-                      onDone={(view) => setLeft({ name: person.name, view })}
+                      onDone={(view) => {
+                        setTyped('');
+                        setLeft({ name: person.name, view });
+                      }}
                     />
                   </td>
                 )}

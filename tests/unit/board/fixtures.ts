@@ -2,6 +2,7 @@ import {
   LIVE_KINDS,
   type BriefingRecord,
   type CheckoutRecord,
+  type InstallationRecord,
   type LiveCollections,
   type LiveKind,
   type PersonRecord,
@@ -30,6 +31,19 @@ export function liveOf(records: { [K in LiveKind]?: LiveCollections[K][] }): Liv
     records: { ...empty, ...records },
   });
 }
+
+export const installationRecord = (change: Partial<InstallationRecord>): InstallationRecord => ({
+  id: 'i1',
+  revision: 1,
+  name: 'Pump Hall Canopy',
+  venue: 'Pump Hall',
+  timeZone: 'Pacific/Auckland',
+  unit: 'mm',
+  hallLimit: 80,
+  status: 'published',
+  settings: { maxInHand: 2, ageChanges: [] },
+  ...change,
+});
 
 export const stepRecord = (change: Partial<StepRecord>): StepRecord => ({
   id: 'step',

@@ -13,6 +13,7 @@ import { setServerTime } from '../../../src/lib/server-clock';
 import { SESSION_KEY } from '../../../src/lib/session-key';
 import {
   checkoutRecord,
+  installationRecord,
   liveOf,
   NOW,
   personRecord,
@@ -60,19 +61,7 @@ const piet = arrival('piet', 'Piet O', 42, { ageBand: '13-15', joinedAt: NOW - 6
 
 function hall(change: { hallLimit?: number } = {}): LiveState {
   return liveOf({
-    installation: [
-      {
-        id: 'i1',
-        revision: 1,
-        name: 'Hall',
-        venue: 'Pump Hall',
-        timeZone: 'Pacific/Auckland',
-        unit: 'mm',
-        hallLimit: change.hallLimit ?? 80,
-        status: 'published',
-        settings: { maxInHand: 2, ageChanges: [] },
-      },
-    ],
+    installation: [installationRecord({ hallLimit: change.hallLimit ?? 80 })],
     people: [
       personRecord({ id: 'kofi', number: 12 }),
       personRecord({ id: 'lena', name: 'Lena W', number: 2, duties: ['safety lead', 'first-aider'] }),
