@@ -233,6 +233,19 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
           {tool && <ToolRead tool={tool} />}
         </div>
       </div>
+      {refusal && (
+        <Note
+          kind="refused"
+          title={refusal.title}
+          actions={
+            <Action look="words" onClick={clear}>
+              Start again
+            </Action>
+          }
+        >
+          {refusal.text}
+        </Note>
+      )}
       <div className="lend-how">
         <div>
           <span className="field-label" aria-hidden="true">
@@ -262,19 +275,6 @@ export function LendDesk({ installationId, crib }: { installationId: string; cri
             ))}
         </SelectField>
       </div>
-      {refusal && (
-        <Note
-          kind="refused"
-          title={refusal.title}
-          actions={
-            <Action look="words" onClick={clear}>
-              Start again
-            </Action>
-          }
-        >
-          {refusal.text}
-        </Note>
-      )}
       {!refusal && person && tool && (
         <div className="lend-go">
           <Action size="phone" look="main" busy={lend.isPending} onClick={() => send(person, tool)}>
