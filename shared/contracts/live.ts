@@ -1,5 +1,5 @@
 import type { Duty, SiteRole } from '../accounts';
-import type { Clocks, CrewMember, StepStateName } from '../travellers';
+import type { Step } from '../travellers/step';
 import type { AgeBand, Hazard } from '../safety';
 
 /** Who sees what: each socket sits in exactly one of these, and in its person's room. */
@@ -53,33 +53,8 @@ export interface SubAssemblyRecord extends LiveRecord {
   travellerRevision: number;
   removed: boolean;
 }
-export interface StepRecord extends LiveRecord {
-  subAssemblyId: string;
-  position: number;
-  operation: string;
-  name: string;
-  stationId: string;
-  hazards: Hazard[];
-  toolKinds: string[];
-  crewMin: number;
-  crewMax: number;
-  plannedSeconds: number;
-  clocks: Clocks | null;
-  needsCheck: boolean;
-  state: StepStateName;
-  held: { reason: string; by: string; at: number } | null;
-  crew: CrewMember[];
-  doers: string[];
-  startedAt: number | null;
-  finishedAt: number | null;
-  finishedBy: string | null;
-  dryUntil: number | null;
-  passedAt: number | null;
-  passedBy: string | null;
-  rework: { reason: string; by: string; at: number } | null;
-  handOver: { from: string; to: string; at: number } | null;
-  /** Rules that a recorded change broke (rule 10); a lead has to look at it. */
-  flags: string[];
+/** A step as the rules see it. */
+export interface StepRecord extends Step, LiveRecord {
   removed: boolean;
 }
 export interface PersonRecord extends LiveRecord {
