@@ -36,7 +36,7 @@ async function main(): Promise<void> {
   if (values.fresh) removeDemo(config.DATABASE_FILE);
   const hall = await hallOf(config);
   const app = await serve(config, systemClock(config.CLOCK_RATE, resumeAt(config.DATABASE_FILE)));
-  print(app.deps.publicUrl(), hall, config);
+  print(app.deps.publicUrl(), hall, config, app.deps.clock.now());
 }
 
 /** What a start needs to print and the database does not keep: the projector's secret. */
@@ -81,13 +81,21 @@ function lanAddress(): string {
   return found.address;
 }
 
-function print(url: string, hall: DemoHall, config: Config): void {
+const hallTime = (at: number): string =>
+  new Intl.DateTimeFormat('en-GB', {
+    hour: '2-digit',
+    minute: '2-digit',
+    timeZone: INSTALLATION.timeZone,
+  }).format(at);
+
+function print(url: string, hall: DemoHall, config: Config, now: number): void {
   const rows = MEMBERS.map(
     ({ email, duties, siteRole }) =>
       `  ${email.padEnd(26)}${[siteRole === 'admin' ? 'admin' : '', ...duties].filter(Boolean).join(', ')}`,
   );
+  const time = hallTime(now);
   console.log(`
-${INSTALLATION.name}, ${INSTALLATION.venue}: Saturday 12 June 2027, 14:07 in the hall${config.CLOCK_RATE > 1 ? `, ${config.CLOCK_RATE} times as fast` : ''}.
+${INSTALLATION.name}, ${INSTALLATION.venue}: Saturday 12 June 2027, ${time} in the hall${config.CLOCK_RATE > 1 ? `, ${config.CLOCK_RATE} times as fast` : ''}.
 
 Open         ${url}
 Sign in with the password "${DEMO_PASSWORD}" as
