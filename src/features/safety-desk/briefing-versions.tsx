@@ -68,7 +68,9 @@ function VersionWays({
   onWrite: (writing: Writing) => void;
 }) {
   const proposals = useProposals(desk.installationId, briefing.key);
-  const waiting = proposals.data ?? [];
+  const newest = briefing.versions.at(-1)?.version ?? 0;
+  // One that was seconded meanwhile is in the live state before it is out of this list.
+  const waiting = (proposals.data ?? []).filter(({ version }) => version > newest);
   const { key, title } = briefing;
   return (
     <>
@@ -93,8 +95,8 @@ function VersionWays({
         </Action>
       </div>
       <p className="text-small text-pencil">
-        {counted(briefing.validityDays, 'day')} from the countersign on; a change ends sign-offs, a correction
-        does not.
+        A sign-off holds {counted(briefing.validityDays, 'day')} from its countersign. A change ends it, a
+        correction does not.
       </p>
     </>
   );

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import type { VersionOutcome } from '../../../shared/contracts/safety';
 import { Action } from '../../components/ui/action';
@@ -25,7 +25,14 @@ export function CountersignDesk({ installationId }: { installationId: string }) 
     a.title.localeCompare(b.title),
   );
   const [query, setQuery] = useSearchParams();
-  const [outcome, setOutcome] = useState<VersionOutcome | null>(null);
+  const [outcome, setOutcome] = useState<(VersionOutcome & { key: string }) | null>(null);
+  const isWriting = query.has('write');
+  const wasWriting = useRef(isWriting);
+  useEffect(() => {
+    // Back from the editor, the page begins at its head again.
+    if (wasWriting.current && !isWriting) document.querySelector<HTMLElement>('.page-title')?.focus();
+    wasWriting.current = isWriting;
+  }, [isWriting]);
   if (!desk) return <Pending />;
   const written = briefings.find(({ key }) => key === query.get('write'));
   const write = (writing: Writing | null) => {
@@ -38,13 +45,20 @@ export function CountersignDesk({ installationId }: { installationId: string }) 
         briefing={written}
         kind={query.get('kind') === 'correction' ? 'correction' : 'change'}
         onDone={(reply) => {
-          setOutcome(reply);
+          setOutcome({ ...reply, key: written.key });
           write(null);
         }}
         onClose={() => write(null)}
       />
     );
   const { waiting, signedOff } = desk.lists;
+  // What waited for a second lead and has been published since needs no word any more.
+  const isPast = briefings.some(
+    ({ key, versions }) =>
+      outcome?.status === 'proposed' &&
+      key === outcome.key &&
+      versions.some(({ version }) => version === outcome.version),
+  );
   return (
     <>
       <PageHead
@@ -53,8 +67,8 @@ export function CountersignDesk({ installationId }: { installationId: string }) 
       />
       <div className="countersign">
         <div className="countersign-main">
-          {outcome && <Outcome desk={desk} outcome={outcome} onClose={() => setOutcome(null)} />}
-          <Lists desk={desk} />
+          {outcome && !isPast && <Outcome desk={desk} outcome={outcome} onClose={() => setOutcome(null)} />}
+          <Open desk={desk} />
         </div>
         <aside className="countersign-side">
           <StillWorking desk={desk} />
@@ -72,17 +86,16 @@ export function CountersignDesk({ installationId }: { installationId: string }) 
               </div>
             </section>
           )}
-          <p className="text-small text-pencil">
-            Local codes and the advice of competent people come before this list.
-          </p>
         </aside>
+        <SignedOff desk={desk} />
       </div>
     </>
   );
 }
 
-function Lists({ desk }: { desk: Desk }) {
-  const { waiting, talks, notYet, notBegun, signedOff } = desk.lists;
+/** What somebody has to do something about. */
+function Open({ desk }: { desk: Desk }) {
+  const { waiting, talks, notYet, notBegun } = desk.lists;
   const questionsOf = useQuestions(desk.installationId, [...talks, ...notYet]);
   const begun = notBegun.reduce((sum, { people }) => sum + people.length, 0);
   return (
@@ -93,8 +106,8 @@ function Lists({ desk }: { desk: Desk }) {
         </DimensionHead>
         {desk.me && desk.may('briefing.countersign') && waiting.length > 0 && (
           <p className="py-2">
-            You, {desk.me.name}, saw the person answer and sign: only then countersign, one by one. What it
-            allows is open to them at once.
+            Countersign one by one, and only whom you, {desk.me.name}, saw answer and sign. What it allows is
+            open to them at once.
           </p>
         )}
         <WaitingList desk={desk} />
@@ -115,13 +128,25 @@ function Lists({ desk }: { desk: Desk }) {
           <NotYetList desk={desk} questionsOf={questionsOf} />
         </section>
       )}
-      <section aria-labelledby="countersign-signed-off">
-        <DimensionHead id="countersign-signed-off" right={counted(signedOff.length, 'person', 'people')}>
-          Signed off
-        </DimensionHead>
-        <SignedOffList desk={desk} />
-      </section>
     </>
+  );
+}
+
+/** Everybody whose sign-off counts. It is long, so it comes last on a phone. */
+function SignedOff({ desk }: { desk: Desk }) {
+  return (
+    <section className="countersign-last" aria-labelledby="countersign-signed-off">
+      <DimensionHead
+        id="countersign-signed-off"
+        right={counted(desk.lists.signedOff.length, 'person', 'people')}
+      >
+        Signed off
+      </DimensionHead>
+      <SignedOffList desk={desk} />
+      <p className="pt-4 text-small text-pencil">
+        Local codes and the advice of competent people come before this list.
+      </p>
+    </section>
   );
 }
 

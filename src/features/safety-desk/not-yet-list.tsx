@@ -8,7 +8,7 @@ import type { Desk } from './use-desk';
 export function NotYetList({ desk, questionsOf }: { desk: Desk; questionsOf: QuestionsOf }) {
   const { notYet, notBegun } = desk.lists;
   return (
-    <div className="grid gap-3 text-pencil">
+    <div className="grid gap-3 py-2 text-pencil">
       {notYet.length > 0 && (
         <Sheet caption="Not passed or not signed yet">
           <thead>

@@ -7,7 +7,7 @@ import { ConfirmAction } from '../../components/ui/confirm-action';
 import { Dialog } from '../../components/ui/dialog';
 import { Pending } from '../../components/ui/pending';
 import { Refusal } from '../../components/ui/refusal';
-import { useBriefingText, useReloadProposals } from './queries';
+import { useNewestVersion, useReloadProposals } from './queries';
 import type { Desk } from './use-desk';
 import { useOnce } from './use-once';
 import { VersionPreview } from './version-preview';
@@ -38,7 +38,7 @@ function Proposal({ desk, briefing, proposal }: ProposalProps) {
   const { version, whatChanged, at } = proposal;
   const by = desk.nameOf(proposal.proposedBy);
   return (
-    <li className="proposal">
+    <li className="correction">
       <p className="font-semibold">Correction {version} waits for a second safety lead</p>
       <p className="text-small text-pencil">
         by {by}, {desk.at.time(at)}
@@ -101,7 +101,7 @@ function whyNot(desk: Desk, briefing: BriefingRecord, { version, proposedBy }: P
 function ReadProposal({ desk, briefing, proposal, onClose }: ProposalProps & { onClose: () => void }) {
   const { installationId } = desk;
   const newest = briefing.versions.at(-1)?.version ?? 1;
-  const before = useBriefingText(installationId, briefing.key, newest);
+  const before = useNewestVersion(installationId, briefing.key, newest);
   const reload = useReloadProposals(installationId, briefing.key);
   const { press, busy, error } = useOnce(async () => {
     await reload();

@@ -1,6 +1,11 @@
 import { useQueries, useQuery, useQueryClient } from '@tanstack/react-query';
 import type { BriefingRecord } from '../../../shared/contracts/live';
-import type { BriefingTextView, ProposedVersionView, RegisterView } from '../../../shared/contracts/safety';
+import type {
+  BriefingTextView,
+  ProposedVersionView,
+  RegisterView,
+  WholeVersionView,
+} from '../../../shared/contracts/safety';
 import { get } from '../../lib/api';
 import { useLive } from '../../lib/live';
 
@@ -27,9 +32,17 @@ const textQuery = (installationId: string, key: string, version: number) => ({
   staleTime: Infinity,
 });
 
-/** One published version as people read it, without the right answers. */
-export const useBriefingText = (installationId: string, key: string, version: number) =>
-  useQuery(textQuery(installationId, key, version));
+/**
+ * The newest version of a briefing with its right answers, to write the next one from.
+ * @param newest its number, as the live state knows it
+ */
+export const useNewestVersion = (installationId: string, key: string, newest: number) =>
+  useQuery({
+    queryKey: ['briefing-newest', installationId, key, newest],
+    queryFn: () => get<WholeVersionView>(`/installations/${installationId}/briefings/${key}/versions`),
+    // Somebody may publish another one while this one is written on: the words must not change under the hands.
+    staleTime: Infinity,
+  });
 
 /** The questions of a version by id; undefined until its text is there. */
 export type QuestionsOf = (key: string, version: number) => ReadonlyMap<string, string> | undefined;

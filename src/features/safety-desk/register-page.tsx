@@ -141,7 +141,7 @@ function Extract({
         <DimensionHead id="register-head" right={counted(count, 'row')}>
           Head hash
         </DimensionHead>
-        <p className="register-hash">{headHash}</p>
+        <p className="head-hash">{headHash}</p>
         <p className="text-small">
           A chain shows that no row was changed or taken from the middle. Rows cut off its end show only
           against a printed extract: print one at the end of the day and keep it away from the computer.

@@ -16,15 +16,15 @@ export function Signature({
   if (signature.error) return <span className="text-pencil">cannot be shown</span>;
   const { kind, value } = signature.data;
   return (
-    <span className="signature">
+    <span className="sign-line">
       {kind === 'typed' ? (
         <>
-          <span className="signature-typed">{value}</span>
+          <span className="sign-typed">{value}</span>
           <span className="sr-only">, typed</span>
         </>
       ) : (
         <svg
-          className="signature-drawn"
+          className="sign-drawn"
           viewBox="0 0 600 160"
           role="img"
           aria-label={`drawn signature of ${name}`}

@@ -25,17 +25,19 @@ export function SignedOffList({ desk }: { desk: Desk }) {
   return (
     <>
       {revoked && (
-        <Note
-          kind="done"
-          title={`The sign-off of ${revoked.name} is revoked.`}
-          actions={
-            <Action look="words" onClick={() => setRevoked(null)}>
-              Close
-            </Action>
-          }
-        >
-          <WorkInHandWords desk={desk} work={revoked.work} />
-        </Note>
+        <div className="pt-4">
+          <Note
+            kind="done"
+            title={`The sign-off of ${revoked.name} is revoked.`}
+            actions={
+              <Action look="words" onClick={() => setRevoked(null)}>
+                Close
+              </Action>
+            }
+          >
+            <WorkInHandWords desk={desk} work={revoked.work} />
+          </Note>
+        </div>
       )}
       {signedOff.length > FEW && (
         <div className="muster-find">
@@ -53,7 +55,7 @@ export function SignedOffList({ desk }: { desk: Desk }) {
           title={signedOff.length === 0 ? 'Nobody is signed off yet.' : 'Nobody here has this name.'}
         />
       ) : (
-        <Sheet caption="Signed off" rows="fixed">
+        <Sheet caption="Signed off" rows="fixed" className="signed-off-sheet">
           <thead>
             <tr>
               <th scope="col">name</th>

@@ -40,7 +40,7 @@ function StillWorkingStep({ desk, found: { step, piece, crew } }: { desk: Desk; 
   const what = `${code} ${step.name}`;
   const [first] = crew;
   return (
-    <li className="still-working">
+    <li className="step-to-look-after">
       <p className="font-semibold">{listed(crew.map(({ name }) => name))}</p>
       <p className="text-small">
         {what}, {station}. {first?.ended ? `In hand when version ${first.ended.now} came. ` : ''}Not stopped:

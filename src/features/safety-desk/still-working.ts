@@ -5,9 +5,9 @@ import type {
   SubAssemblyRecord,
 } from '../../../shared/contracts/live';
 import { voidingChange } from '../../../shared/safety/briefing-versions';
+import { hazardGate, missingByHazard } from '../../../shared/safety/hazard-gate';
 import { HAZARD_LABELS, type Hazard } from '../../../shared/safety/hazards';
 import type { LiveState } from '../../lib/live-state';
-import { personFacts } from '../../lib/world';
 
 /** Somebody of a crew who has no valid sign-off for a hazard of the step in hand. */
 export interface Unsigned {
@@ -34,14 +34,18 @@ export interface StepToLookAfter {
  */
 export function stepsToLookAfter(live: Pick<LiveState, 'records'>, now: number): StepToLookAfter[] {
   const { steps, subAssemblies, people } = live.records;
+  const signOffs = [...live.records.signOffs.values()];
+  const briefings = [...live.records.briefings.values()];
   const found: StepToLookAfter[] = [];
   for (const step of steps.values()) {
     if (step.removed || step.hazards.length === 0) continue;
     const crew = step.crew.flatMap(({ personId }): Unsigned[] => {
-      const { missing } = personFacts(live, personId, now);
+      const person = people.get(personId);
+      const asked = { id: personId, ageConfirmed: person?.confirmed ?? false };
+      const missing = missingByHazard(hazardGate(step.hazards, signOffs, briefings, now, asked));
       const hazard = step.hazards.find((one) => missing[one] !== undefined);
       if (!hazard) return [];
-      const name = people.get(personId)?.name ?? 'somebody';
+      const name = person?.name ?? 'somebody';
       const reason = missing[hazard] ?? '';
       return [{ personId, name, hazard, reason, ended: endedVersion(live, personId, hazard, now) }];
     });

@@ -1,13 +1,12 @@
 import { useMemo } from 'react';
 import type { Duty } from '../../../shared/accounts';
-import type { PersonRecord } from '../../../shared/contracts/live';
+import type { BriefingRecord, PersonRecord } from '../../../shared/contracts/live';
 import { mayCountersign } from '../../../shared/safety/countersign';
 import type { AgeRules } from '../../../shared/safety/age-table';
-import { useLiveMap } from '../../lib/live';
+import { useLive, useLiveMap } from '../../lib/live';
 import { membershipIn, useMay, useSession } from '../../lib/session';
 import { useServerNow } from '../../lib/server-clock';
 import { houseRules } from '../../lib/world';
-import { useLive } from '../../lib/live';
 import { adultHere, allowedWords, momentIn, refusalWords, type Allowed, type Moment } from './desk-words';
 import { signOffLists, type SignOffLine, type SignOffLists } from './sign-off-lists';
 
@@ -28,16 +27,15 @@ export interface Desk {
 export function useDesk(installationId: string): Desk | null {
   const { data } = useSession();
   const may = useMay(installationId);
-  const now = useServerNow(20_000);
+  const clock = useServerNow(3000);
   const people = useLiveMap(installationId, 'people');
   const signOffs = useLiveMap(installationId, 'signOffs');
   const briefings = useLiveMap(installationId, 'briefings');
   const live = useLive(installationId, (state) => state);
-  // A minute is close enough for what ends by the mere passing of time.
-  const minute = Math.ceil(now / 60_000) * 60_000;
+  const now = momentOfChange(clock, briefings.values());
   const lists = useMemo(
-    () => signOffLists(people.values(), signOffs.values(), briefings.values(), minute),
-    [people, signOffs, briefings, minute],
+    () => signOffLists(people.values(), signOffs.values(), briefings.values(), now),
+    [people, signOffs, briefings, now],
   );
   if (!live) return null;
   const [installation] = live.records.installation.values();
@@ -53,6 +51,19 @@ export function useDesk(installationId: string): Desk | null {
     lists,
     ageRules: houseRules(live).ageRules,
   };
+}
+
+const MINUTE = 60_000;
+
+/**
+ * The last moment at which something may have ended or begun by the mere passing of time: a minute is close enough for what
+ * expires, and a version counts from its very moment. Lists are made anew only then.
+ */
+function momentOfChange(now: number, briefings: Iterable<BriefingRecord>): number {
+  const begun = [...briefings]
+    .flatMap(({ versions }) => versions.map(({ effectiveFrom }) => effectiveFrom))
+    .filter((from) => from <= now);
+  return Math.max(Math.floor(now / MINUTE) * MINUTE, ...begun);
 }
 
 const onSiteWith = ({ people }: Desk, duty: Duty, but: string): string[] =>

@@ -1,7 +1,7 @@
 import { TZDate } from '@date-fns/tz';
 import type { z } from 'zod';
 import type { FieldProblem } from '../../../shared/contracts/errors';
-import { proposeVersionSchema, type BriefingTextView } from '../../../shared/contracts/safety';
+import { proposeVersionSchema } from '../../../shared/contracts/safety';
 import { newId } from '../../../shared/kernel/ids';
 import type { BriefingBody, SourceNote, Statement } from '../../../shared/safety';
 import { SIGNAL_WORD_OF, type Harm } from '../../../shared/safety/signal-words';
@@ -55,8 +55,8 @@ export interface VersionBase {
 
 export const entryId = (noun: string): string => `${noun}-${newId().toLowerCase().slice(-10)}`;
 
-/** A text to write on. The right answers are empty where the text comes as people read it. */
-export function draftOf(body: BriefingTextView['body'] | BriefingBody): DraftBody {
+/** A text to write on. */
+export function draftOf(body: BriefingBody): DraftBody {
   return {
     panels: body.panels.map(({ id, harm, headline, consequence, avoid, sources }) => ({
       id,
@@ -69,7 +69,7 @@ export function draftOf(body: BriefingTextView['body'] | BriefingBody): DraftBod
     rules: body.rules,
     firstAid: body.firstAid,
     notes: body.notes,
-    questions: body.questions.map((question) => ({ right: '', why: '', ...question })),
+    questions: body.questions,
     closing: body.closing,
     sources: body.sources,
   };
@@ -157,13 +157,12 @@ export type Mark = 'new' | 'changed';
 const MARKED = ['panels', 'rules', 'firstAid', 'notes', 'questions'] as const;
 
 /**
- * Which entries are new or have other words than before. Right answers and reasons are not compared: the text before
- * comes without them.
+ * Which entries are new or have other words than before.
  * @returns marks by the list's name and the entry's id, such as `rules.stand`; and how many entries are gone
  */
 export function marksOf(
-  before: BriefingTextView['body'],
-  after: BriefingTextView['body'] | BriefingBody,
+  before: BriefingBody,
+  after: BriefingBody,
 ): { marks: ReadonlyMap<string, Mark>; gone: number } {
   const marks = new Map<string, Mark>();
   let gone = 0;
@@ -182,7 +181,7 @@ export function marksOf(
 }
 
 function wordsOf(entry: object): string {
-  const shown = ['signalWord', 'headline', 'consequence', 'avoid', 'text', 'options'];
+  const shown = ['signalWord', 'headline', 'consequence', 'avoid', 'text', 'options', 'right', 'why'];
   return JSON.stringify(
     shown.map((key) => {
       const value = (entry as Record<string, unknown>)[key];

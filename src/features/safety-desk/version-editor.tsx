@@ -1,6 +1,6 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import type { BriefingRecord } from '../../../shared/contracts/live';
-import type { BriefingTextView, VersionOutcome } from '../../../shared/contracts/safety';
+import type { VersionOutcome, WholeVersionView } from '../../../shared/contracts/safety';
 import type { Statement } from '../../../shared/safety';
 import { Action } from '../../components/ui/action';
 import { OptionStruts } from '../../components/ui/choices';
@@ -30,7 +30,7 @@ export interface VersionEditorProps {
   briefing: BriefingRecord;
   kind: VersionBase['kind'];
   /** The newest published text. */
-  text: BriefingTextView;
+  text: WholeVersionView;
   zone: string;
   /** What a change would end: sign-offs that count now, and steps in hand that need them. */
   ends: { signOffs: number; stepsInHand: number };
@@ -63,6 +63,7 @@ export function VersionEditor(props: VersionEditorProps) {
     from: localOf(Math.max(serverNow() + 1_800_000, text.effectiveFrom), zone),
     body: draftOf(text.body),
   }));
+  useEffect(() => document.querySelector<HTMLElement>('.page-title')?.focus(), []);
   const [view, setView] = useState<'write' | 'read'>('write');
   const form = useForm<VersionOutcome>({
     request: () => {
@@ -191,7 +192,6 @@ function BodyFields({
   setBody: (part: Partial<DraftBody>) => void;
   problem: (path: string) => string | undefined;
 }) {
-  const unmarked = body.questions.some(({ right }) => right === '');
   return (
     <>
       <EntryList<DraftPanel>
@@ -259,11 +259,6 @@ function BodyFields({
         least={1}
         most={20}
         error={problem('questions')}
-        hint={
-          unmarked
-            ? 'The right answers and reasons are never sent to a phone or a page before somebody answers. Mark each one here.'
-            : undefined
-        }
       >
         {(question, i, change) => (
           <QuestionFields

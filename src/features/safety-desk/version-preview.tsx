@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react';
-import type { BriefingTextView } from '../../../shared/contracts/safety';
 import type { BriefingBody } from '../../../shared/safety';
 import { DimensionHead } from '../../components/ui/heads';
 import { Note } from '../../components/ui/note';
@@ -14,7 +13,7 @@ export function VersionPreview({
   whatChanged,
 }: {
   body: BriefingBody;
-  before: BriefingTextView['body'];
+  before: BriefingBody;
   whatChanged: string;
 }) {
   const { marks, gone } = marksOf(before, body);
@@ -27,7 +26,7 @@ export function VersionPreview({
       <p className="text-small text-pencil">
         {marks.size === 0 && gone === 0
           ? 'The same words as before.'
-          : `${counted(marks.size, 'entry', 'entries')} new or changed, ${gone} taken out. Right answers and reasons are not compared.`}
+          : `${counted(marks.size, 'entry', 'entries')} new or changed, ${gone} taken out.`}
       </p>
       {body.panels.map((panel) => (
         <Marked key={panel.id} mark={markOf('panels', panel.id)}>

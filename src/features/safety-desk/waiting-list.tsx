@@ -30,12 +30,12 @@ export function WaitingList({ desk }: { desk: Desk }) {
     );
   return (
     <>
-      <Sheet caption="Signed, waiting for a countersign" className="waiting-sheet">
+      <Sheet caption="Signed, waiting for a countersign" className="countersign-sheet">
         <thead>
           <tr>
             <th scope="col">signed by</th>
             <th scope="col">age band, adult</th>
-            <th scope="col">questions right</th>
+            <th scope="col">questions</th>
             <th scope="col">signature</th>
             <th scope="col">then allowed</th>
             <th scope="col">
@@ -86,7 +86,9 @@ function WaitingRow({
         {person.id === me?.id && ', you'}
         {!person.onSite && <span className="block text-pencil">not on site now</span>}
       </td>
-      <td data-label="questions right">{right === null ? '' : `${right} of ${questions}`}</td>
+      <td className="whitespace-nowrap" data-label="questions right">
+        {right === null ? '' : `${right} of ${questions}`}
+      </td>
       <td>
         {desk.may('briefing.countersign') ? (
           <Signature installationId={installationId} signOffId={signOff.id} name={person.name} />
@@ -95,25 +97,27 @@ function WaitingRow({
         )}
       </td>
       <td>
-        <span className={allowed?.nothing ? 'text-held font-semibold' : undefined}>
-          {allowed?.words ?? 'as the age band allows'}
-        </span>
+        {!done && offer?.ok === false ? (
+          offer.why
+        ) : (
+          <span className={allowed?.nothing ? 'text-held font-semibold' : undefined}>
+            {allowed?.words ?? 'as the age band allows'}
+          </span>
+        )}
         <span className="block text-pencil">
           {briefing.title} {signOff.version}, signed{' '}
           {signOff.signedAt === null ? '' : at.time(signOff.signedAt)}
         </span>
       </td>
-      <td className="waiting-act">
+      <td className="countersign-act">
         {done ? (
-          <span role="status">
+          <span className="whitespace-nowrap" role="status">
             <StateWord state="passed">
               countersigned {signOff.countersignedAt === null ? '' : at.time(signOff.countersignedAt)}
             </StateWord>
           </span>
-        ) : offer?.ok ? (
-          <Countersign desk={desk} line={line} as={offer.as} />
         ) : (
-          offer && <span className="text-pencil">{offer.why}</span>
+          offer?.ok && <Countersign desk={desk} line={line} as={offer.as} />
         )}
       </td>
     </tr>

@@ -1,10 +1,11 @@
+import { useState } from 'react';
 import type { BriefingRecord } from '../../../shared/contracts/live';
 import type { VersionOutcome } from '../../../shared/contracts/safety';
 import { Pending } from '../../components/ui/pending';
 import { Refusal } from '../../components/ui/refusal';
 import { useLiveMap } from '../../lib/live';
 import type { Writing } from './briefing-versions';
-import { useBriefingText, useReloadProposals } from './queries';
+import { useNewestVersion, useReloadProposals } from './queries';
 import type { Desk } from './use-desk';
 import { VersionEditor } from './version-editor';
 
@@ -24,7 +25,9 @@ export function WriteVersion({
 }) {
   const { installationId, lists, zone } = desk;
   const newest = briefing.versions.at(-1)?.version ?? 1;
-  const text = useBriefingText(installationId, briefing.key, newest);
+  // Somebody may publish another one meanwhile: what is being written stays until the newer text is asked for.
+  const [basis, setBasis] = useState(newest);
+  const text = useNewestVersion(installationId, briefing.key, basis);
   const steps = useLiveMap(installationId, 'steps');
   const reload = useReloadProposals(installationId, briefing.key);
   if (text.isPending) return <Pending />;
@@ -38,8 +41,7 @@ export function WriteVersion({
   const signOffs = lists.signedOff.filter((line) => line.briefing.id === briefing.id).length;
   return (
     <VersionEditor
-      // Somebody published another version meanwhile: what was written stays until the newer text is asked for.
-      key={kind}
+      key={`${kind} ${basis}`}
       installationId={installationId}
       briefing={briefing}
       kind={kind}
@@ -51,7 +53,7 @@ export function WriteVersion({
         onDone(outcome);
       }}
       onCancel={onClose}
-      onReload={onClose}
+      onReload={() => setBasis(newest)}
     />
   );
 }
