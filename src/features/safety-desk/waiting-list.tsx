@@ -19,7 +19,7 @@ export function WaitingList({ desk }: { desk: Desk }) {
   const [kept, setKept] = useState<ReadonlySet<string>>(new Set());
   const fresh = waiting.filter(({ signOff }) => !kept.has(signOff.id));
   if (fresh.length > 0) setKept(new Set([...kept, ...fresh.map(({ signOff }) => signOff.id)]));
-  const done = signedOff.filter(() => false);
+  const done = signedOff.filter(({ signOff }) => kept.has(signOff.id));
   const lines = [...waiting, ...done].sort((a, b) => (a.signOff.signedAt ?? 0) - (b.signOff.signedAt ?? 0));
   const questionsOf = useQuestions(desk.installationId, lines);
   if (lines.length === 0)
