@@ -83,7 +83,11 @@ function Rows({ installationId, rows }: { installationId: string; rows: readonly
   const at = momentIn(zone, useServerNow(60_000));
   const [most, setMost] = useState(PAGE);
   const newest = [...rows].reverse();
-  const nameOf = (id: string) => people.get(id)?.name ?? 'erased';
+  const briefings = useLiveMap(installationId, 'briefings');
+  const names = {
+    person: (id: string) => people.get(id)?.name ?? 'erased',
+    briefing: (key: string) => [...briefings.values()].find((one) => one.key === key)?.title ?? key,
+  };
   if (rows.length === 0) return <EmptyNote title="Nothing is in the register yet." />;
   return (
     <>
@@ -111,8 +115,8 @@ function Rows({ installationId, rows }: { installationId: string; rows: readonly
               </td>
               <td>{KIND_WORDS[row.kind] ?? row.kind}</td>
               <td className={row.personal === null ? 'text-pencil' : 'font-semibold'}>{whoOf(row)}</td>
-              <td>{detailOf(row, nameOf, at)}</td>
-              <td className="text-pencil" data-label="hash" title={row.hash}>
+              <td>{detailOf(row, names, at)}</td>
+              <td className="register-mark text-pencil" data-label="hash" title={row.hash}>
                 {row.hash.slice(0, 12)}
               </td>
             </tr>
@@ -158,7 +162,10 @@ function Extract({
           On the computer that serves Strutbee, with count and head hash from a printed extract:
         </p>
         <pre className="register-command" tabIndex={0}>
-          <code>{`npm run verify:register -- --installation ${installationId} --count ${count} --head ${headHash}`}</code>
+          <code>
+            npm run verify:register -- <Flag>--installation</Flag> {installationId} <Flag>--count</Flag>{' '}
+            {count} <Flag>--head</Flag> {headHash}
+          </code>
         </pre>
         <p className="text-small text-pencil">
           When a person is erased, the names go and the rows still hold: only a salted commitment to them is
@@ -168,3 +175,6 @@ function Extract({
     </>
   );
 }
+
+/** An option of a command: never broken at its hyphens. */
+const Flag = ({ children }: { children: string }) => <span className="whitespace-nowrap">{children}</span>;

@@ -22,18 +22,19 @@ export function whoOf({ ids, personal }: Pick<RegisterRowView, 'ids' | 'personal
 /** What a row is about, in a few words: the briefing, the age band, who did it, from when. */
 export function detailOf(
   { ids, personal }: Pick<RegisterRowView, 'ids' | 'personal'>,
-  nameOf: (id: string) => string,
+  names: { person: (id: string) => string; briefing: (key: string) => string },
   at: Moment,
 ): string {
   const band = AGE_BANDS.find((one) => one === personal?.ageBand);
-  const by = ids.by === undefined ? '' : `by ${nameOf(String(ids.by))}`;
+  // Where a row is about no other person, the one it names is the one who did it.
+  const by = ids.by === undefined || ids.personId === undefined ? '' : `by ${names.person(String(ids.by))}`;
   return [
     ids.briefingKey === undefined
       ? ''
-      : `${personal?.briefing ?? ids.briefingKey} ${ids.version ?? ''}`.trim(),
+      : `${personal?.briefing ?? names.briefing(String(ids.briefingKey))} ${ids.version ?? ''}`.trim(),
     band ? AGE_BAND_LABELS[band] : '',
     by === '' || ids.as === undefined ? by : `${by} as ${ids.as}`,
-    ids.proposedBy === undefined ? '' : `proposed by ${nameOf(String(ids.proposedBy))}`,
+    ids.proposedBy === undefined ? '' : `proposed by ${names.person(String(ids.proposedBy))}`,
     ids.effectiveFrom === undefined
       ? ''
       : `from ${at.date(Number(ids.effectiveFrom))} ${at.time(Number(ids.effectiveFrom))}`,

@@ -15,7 +15,7 @@ export function StillWorking({ desk }: { desk: Desk }) {
   const old = crew.length > 0 && crew.every(({ ended }) => ended !== null);
   return (
     <section aria-labelledby="still-working">
-      <DimensionHead id="still-working" right={found.length > 0 ? found.length : undefined}>
+      <DimensionHead id="still-working">
         {old || crew.length === 0 ? 'Still working under an old version' : 'In hand without a sign-off'}
       </DimensionHead>
       {found.length === 0 ? (

@@ -5,7 +5,7 @@ import { mayCountersign } from '../../../shared/safety/countersign';
 import type { AgeRules } from '../../../shared/safety/age-table';
 import { useLive, useLiveMap } from '../../lib/live';
 import { membershipIn, useMay, useSession } from '../../lib/session';
-import { useServerNow } from '../../lib/server-clock';
+import { serverNow, useServerNow } from '../../lib/server-clock';
 import { houseRules } from '../../lib/world';
 import { adultHere, allowedWords, momentIn, refusalWords, type Allowed, type Moment } from './desk-words';
 import { signOffLists, type SignOffLine, type SignOffLists } from './sign-off-lists';
@@ -32,7 +32,9 @@ export function useDesk(installationId: string): Desk | null {
   const signOffs = useLiveMap(installationId, 'signOffs');
   const briefings = useLiveMap(installationId, 'briefings');
   const live = useLive(installationId, (state) => state);
-  const now = momentOfChange(clock, briefings.values());
+  // A version that counts at once counts on this page at once.
+  const heard = useMemo(() => (briefings.size > 0 ? serverNow() : 0), [briefings]);
+  const now = momentOfChange(Math.max(clock, heard), briefings.values());
   const lists = useMemo(
     () => signOffLists(people.values(), signOffs.values(), briefings.values(), now),
     [people, signOffs, briefings, now],
