@@ -43,8 +43,8 @@ function StillWorkingStep({ desk, found: { step, piece, crew } }: { desk: Desk; 
     <li className="step-to-look-after">
       <p className="font-semibold">{listed(crew.map(({ name }) => name))}</p>
       <p className="text-small">
-        {what}, {station}. {first?.ended ? `In hand when version ${first.ended.now} came. ` : ''}Not stopped:
-        brief them where they stand, or hold the step.
+        {what}, {station}. {first?.ended ? `In hand when version ${first.ended.now} came. ` : ''}
+        {!step.held && 'Not stopped: brief them where they stand, or hold the step.'}
       </p>
       <ul className="text-small">
         {crew.map((one) => (
@@ -54,9 +54,10 @@ function StillWorkingStep({ desk, found: { step, piece, crew } }: { desk: Desk; 
         ))}
       </ul>
       {step.held && (
-        <StateWord state="held">
-          held by {nameOf(step.held.by)}: {step.held.reason}
-        </StateWord>
+        <p>
+          <StateWord state="held">held by {nameOf(step.held.by)}</StateWord>
+          <span className="block text-small">{step.held.reason}</span>
+        </p>
       )}
       <div className="flex flex-wrap gap-x-5">
         {!step.held && may('step.hold') && (
