@@ -82,14 +82,16 @@ export async function commandStep(
   if (!step) throw notFound();
   const station =
     command.type === 'still-wet' ? await loadDryingAt(manager, installationId, step.stationId) : none();
+  // Stops and sign-offs concern steps with a hazard or a tool; for the others there is nothing to look up.
+  const dangerous = step.hazards.length > 0 || step.toolKinds.length > 0;
   const settings = JSON.parse(installation.settings) as InstallationRecord['settings'];
   const world: World = {
     now,
     step,
     traveller: traveller.steps,
     station: station.steps,
-    person: await personFacts(scope, installationId, personId, command),
-    stops: STOPPABLE.has(command.type) ? await activeStops(manager, installationId) : [],
+    person: await personFacts(scope, installationId, personId, dangerous && SIGNED_OFF.has(command.type)),
+    stops: dangerous && STOPPABLE.has(command.type) ? await activeStops(manager, installationId) : [],
     settings: { maxInHand: settings.maxInHand, ageRules: ageRulesOf(settings) },
   };
   if (command.type === 'offer' && !(await loadPerson(manager, installationId, command.to))) throw notFound();
@@ -111,7 +113,7 @@ async function personFacts(
   scope: WriteScope,
   installationId: string,
   personId: string | null,
-  command: Command,
+  withSignOffs: boolean,
 ): Promise<PersonFacts> {
   if (personId === null) return NOBODY;
   const person = await loadPerson(scope.manager, installationId, personId);
@@ -122,9 +124,7 @@ async function personFacts(
     ageBand: person.age_band,
     duties: person.duties,
     inHand: person.inHand,
-    missing: SIGNED_OFF.has(command.type)
-      ? await missingSignOffs(scope.manager, installationId, personId, scope.now)
-      : {},
+    missing: withSignOffs ? await missingSignOffs(scope.manager, installationId, personId, scope.now) : {},
   };
 }
 
