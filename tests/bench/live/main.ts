@@ -138,7 +138,7 @@ async function main(): Promise<void> {
     const seeded = await seedBench(databaseFile, people, steps);
     const floorServer = await startChild('tests/bench/live/floor-server.ts', {}, [
       path.join(folder, 'floor.sqlite'),
-      '600',
+      '650',
       String(WRITES_OF_A_CLAIM),
     ]);
     const floor = await measure(floorTarget(floorServer.url), seeded, people);
