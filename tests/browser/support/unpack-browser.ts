@@ -18,7 +18,14 @@ export default async function unpackBrowser(project: TestProject): Promise<void>
   }
   const folder = path.resolve('node_modules/.cache/chromium');
   mkdirSync(folder, { recursive: true });
-  // The package unpacks into the folder for temporary files and takes what is there already.
+  // The package unpacks into the folder for temporary files and takes what is there already. The folder is named for this
+  // one call only: every test of the run sees the same environment.
+  const before = process.env.TMPDIR;
   process.env.TMPDIR = folder;
-  project.provide('chromiumPath', await chromium.executablePath());
+  try {
+    project.provide('chromiumPath', await chromium.executablePath());
+  } finally {
+    if (before === undefined) delete process.env.TMPDIR;
+    else process.env.TMPDIR = before;
+  }
 }
