@@ -1,4 +1,5 @@
 import { AsyncLocalStorage } from 'node:async_hooks';
+import { setImmediate as nextLoop } from 'node:timers/promises';
 import type { DataSource, EntityManager } from 'typeorm';
 
 /** Most units that share one commit; the first of them waits for the last, so not too many. */
@@ -48,9 +49,9 @@ export class UnitOfWork {
   }
 
   private async takeTurns(): Promise<void> {
-    // Let whatever arrives in this very moment join the first turn.
-    await Promise.resolve();
     while (this.waiting.length > 0) {
+      // A turn runs through without going back to the event loop, so nobody could join it: hear first what has arrived.
+      await nextLoop();
       const units = this.waiting.splice(0, MOST_AT_ONCE);
       try {
         await this.inside.run(true, () =>

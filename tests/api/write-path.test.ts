@@ -1,5 +1,5 @@
 import Database from 'better-sqlite3';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { manualClock } from '../../shared/kernel/clock';
 import { newId } from '../../shared/kernel/ids';
 import { createApp } from '../../server/app';
@@ -8,6 +8,7 @@ import { openDataSources } from '../../server/db/data-sources';
 import { ENTITIES } from '../../server/db/entities';
 import type { WriteScope } from '../../server/db/write';
 import { AppError } from '../../server/http/app-error';
+import { selectRows } from '../../server/realtime/live-source';
 import { startTestServer, TEST_NOW, type TestServer } from '../support/test-server';
 
 const maker = { actor: 'person:tester', personId: null };
@@ -72,6 +73,41 @@ describe('UnitOfWork', () => {
       Array.from({ length: 100 }, (_, index) => `test.${index * 2}`),
     );
     expect(rows.map((row) => row.revision)).toEqual(Array.from({ length: 100 }, (_, index) => index + 1));
+  });
+});
+
+describe('group commit', () => {
+  it('UnitOfWork > units asked for at different moments of one turn of the event loop > one commit, each with its own answer', async () => {
+    const { unitOfWork, data } = server.app.deps;
+    const commits = vi.spyOn(data.writer, 'transaction');
+    const first = unitOfWork.run(async (manager) => {
+      await manager.query('UPDATE installation SET name = ? WHERE id = ?', ['first', installationId]);
+      return 'first';
+    });
+    // As requests come in: each a few microtasks after the one before, in the same turn.
+    for (let tick = 0; tick < 50; tick += 1) await Promise.resolve();
+    const second = unitOfWork.run(() => Promise.reject(new Error('this one fails')));
+    for (let tick = 0; tick < 50; tick += 1) await Promise.resolve();
+    const third = unitOfWork.run(() => Promise.resolve('third'));
+    await expect(first).resolves.toBe('first');
+    await expect(second).rejects.toThrow('this one fails');
+    await expect(third).resolves.toBe('third');
+    expect(commits).toHaveBeenCalledTimes(1);
+    const rows = await data.writer.query<{ name: string }[]>('SELECT name FROM installation');
+    expect(rows[0]?.name).toBe('first');
+  });
+
+  it('selectRows > rows by id > found by their key, not by walking the installation', () => {
+    const { readHandle } = server.app.deps.data;
+    const prepare = vi.spyOn(readHandle, 'prepare');
+    selectRows(readHandle, 'step', installationId, { ids: ['a', 'b'] });
+    const [sql = ''] = prepare.mock.calls[0] ?? [];
+    const plan = readHandle.prepare(`EXPLAIN QUERY PLAN ${sql}`).all(installationId, '[]') as {
+      detail: string;
+    }[];
+    expect(plan.map((row) => row.detail).join('; ')).toMatch(
+      /SEARCH step USING INDEX sqlite_autoindex_step_1 \(id=\?\)/,
+    );
   });
 });
 

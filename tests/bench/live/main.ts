@@ -124,7 +124,6 @@ async function main(): Promise<void> {
     options: {
       people: { type: 'string', default: '150' },
       steps: { type: 'string', default: '2000' },
-      bursts: { type: 'string', default: '1' },
     },
   });
   const people = Number(values.people);
