@@ -77,6 +77,7 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
       await sessions.endAllOf(key, exceptSid);
       live.hub?.endAllOf(key);
     },
+    endSockets: (sid) => live.hub?.endSession(sid),
     replaceSockets: (ids) => live.hub?.replace(ids),
     phones: (installationId) => live.hub?.phones(installationId) ?? 0,
     publicUrl: () => config.PUBLIC_URL?.replace(/\/$/, '') ?? addressOf(listener),

@@ -21,6 +21,8 @@ export interface Deps {
   reader: LiveReader;
   /** End every session of `account:ID`, `person:ID` or `display:ID` and cut its sockets off; `exceptSid` stays. */
   endSessions(key: string, exceptSid?: string): Promise<void>;
+  /** Cut off the open pages of one session, by its id. */
+  endSockets(sid: string): void;
   /** Move the sockets of these people to the audience they belong to now. */
   replaceSockets(personIds: Iterable<string>): void;
   /** Phones of people with a live link to an installation. */

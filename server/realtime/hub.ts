@@ -105,6 +105,13 @@ export class Hub implements Outlet {
     }
   }
 
+  /** One session signed out: its open pages hear no more. */
+  endSession(sid: string): void {
+    for (const socket of this.io.sockets.sockets.values()) {
+      if ((socket.request as unknown as { sessionID?: string }).sessionID === sid) this.end(socket);
+    }
+  }
+
   /** Phones of people on site with a live link; one person with two tabs counts once. */
   phones(installationId: string): number {
     const people = new Set<string>();

@@ -281,6 +281,8 @@ describe('erasing', () => {
     });
     const bo = await signedInClient(hall.server, boId);
     await signsOff(hall, bo);
+    const refused = await hall.organiser.post(`${people}/${boId}/confirm`, { ageBand: '18+' });
+    expect(refused.error?.message).toContain('Bodo Z');
     await hall.organiser.post(`${hall.base}/close`);
     expect((await erase(boId)).status).toBe(200);
     expect(await seen(hall.lead, boId)).toMatchObject({ name: 'erased 5', removed: true, details: null });

@@ -39,6 +39,19 @@ async function open(client: TestClient): Promise<Board> {
 }
 const stepId = (index: number) => steps[index] as string;
 
+describe('signing out', () => {
+  it('signOut > a person with the board open on two phones > the page of the one that signed out is cut off, the other goes on', async () => {
+    const { id, client } = await person();
+    const [left, stays] = [await open(client), await open(await signedInClient(server, id))];
+    expect((await client.delete('/session')).status).toBe(200);
+    await left.until((board) => board.ended && board.socket.disconnected);
+    const reply = await (await person()).client.post(claimPath(stepId(0)));
+    const { revision } = reply.data as { revision: number };
+    await stays.until((board) => (board.state?.cursor ?? 0) >= revision);
+    expect(left.state?.cursor ?? 0).toBeLessThan(revision);
+  });
+});
+
 describe('live path', () => {
   it('claim > watched by a lead, a volunteer and somebody at the door > each gets the range, whoever waits at the door sees no step and no name', async () => {
     const lead = await person({ duties: ['safety lead', 'volunteer'] });

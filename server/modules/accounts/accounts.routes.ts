@@ -73,7 +73,9 @@ function sessionRoutes(deps: Deps, layer: SessionLayer): AnyRoute[] {
       action: 'session.sign-out',
       unkeyed: true,
       handle: async ({ req, res }) => {
+        const { sessionID } = req;
         await signOut(req);
+        deps.endSockets(sessionID);
         res.clearCookie('strutbee', { path: '/' });
         return { data: null };
       },

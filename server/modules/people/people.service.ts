@@ -1,6 +1,7 @@
 import type { Duty } from '../../../shared/accounts';
 import type { AddMember, Confirm, LeavingView } from '../../../shared/contracts/people';
 import { newId } from '../../../shared/kernel/ids';
+import { forgetNameInAnswers } from '../../db/forget-name';
 import type { WriteScope } from '../../db/write';
 import { AppError, fieldError, notFound } from '../../http/app-error';
 import { loadAccount } from '../accounts';
@@ -297,6 +298,7 @@ export async function erasePerson(
     );
   }
   await erasePersonFromRegister(scope, installationId, personId);
+  await forgetNameInAnswers(scope.manager, installationId, shownName(row));
   await save(scope, personId, {
     firstName: 'erased',
     initial: '',
