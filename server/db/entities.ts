@@ -1,6 +1,8 @@
 import { Account, OneTimeLink } from '../modules/accounts/account.entity';
 import { Checkout, Tool } from '../modules/crib/crib.entity';
+import { DrawingSettingsRow, Placement } from '../modules/frames/drawing.entity';
 import { Frame } from '../modules/frames/frame.entity';
+import { Anchor, HangingGearRow, PieceHanging } from '../modules/hanging/hanging.entity';
 import { BuildDay, DisplayToken, Installation, Station } from '../modules/installations/installation.entity';
 import { Person } from '../modules/people/person.entity';
 import {
@@ -11,6 +13,7 @@ import {
   StopRow,
   StopSeen,
 } from '../modules/safety/safety.entity';
+import { Split } from '../modules/split/split.entity';
 import { Claim, StepRow, SubAssembly, TravellerTemplate } from '../modules/travellers/traveller.entity';
 import { DayLogRow, IdempotencyRow, MailRow, OutboxLetterRow, SessionRow } from './plumbing.entity';
 
@@ -29,6 +32,9 @@ export const ENTITIES = [
   DisplayToken,
   Person,
   Frame,
+  Placement,
+  DrawingSettingsRow,
+  Split,
   TravellerTemplate,
   SubAssembly,
   StepRow,
@@ -41,4 +47,7 @@ export const ENTITIES = [
   StopSeen,
   Tool,
   Checkout,
+  Anchor,
+  HangingGearRow,
+  PieceHanging,
 ];

@@ -49,6 +49,10 @@ export interface SubAssemblyRecord extends LiveRecord {
   code: string;
   name: string;
   position: number;
+  /** A piece that a crew builds, or the joints where pieces meet. */
+  kind: 'piece' | 'field joint';
+  /** Sub-assemblies that must have passed before its first step is ready. */
+  needs: string[];
   /** Revision letter or number of the traveller, printed on the sheet. */
   travellerRevision: number;
   removed: boolean;

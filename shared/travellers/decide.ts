@@ -113,14 +113,18 @@ function claim(world: World, happenedAt: number | undefined): Decision {
 }
 
 /** Why the step has no place for this person, before anything about the person is asked. */
-function placeRefusal({ step, traveller, person, now }: World): Refusal | null {
+function placeRefusal({ step, traveller, missingPieces, person, now }: World): Refusal | null {
   if (holds(step, person.id)) return { code: 'STEP_ALREADY_YOURS', details: {} };
   if (step.held) return { code: 'STEP_HELD', details: { ...step.held } };
   if (step.state === 'waiting') {
     const before = traveller.find((other) => other.position < step.position && other.state !== 'passed');
     return {
       code: 'STEP_NOT_READY',
-      details: { waitsFor: before?.id ?? null, waitsForName: before?.name ?? null },
+      details: {
+        waitsFor: before?.id ?? null,
+        waitsForName: before?.name ?? null,
+        ...(before || !missingPieces?.length ? {} : { waitsForPieces: missingPieces }),
+      },
     };
   }
   if (step.state !== 'ready' && step.state !== 'rework' && step.state !== 'in hand') {
@@ -316,11 +320,14 @@ function checkRefusal({ step, person }: World): Refusal | null {
 }
 
 function pass(world: World): Decision {
-  const { step, traveller, person, now } = world;
+  const { step, traveller, missingPieces, person, now } = world;
   if (step.state !== 'to check') return no('STEP_STATE', { state: step.state });
   if (step.held) return no('STEP_HELD', { ...step.held });
   const refusal = checkRefusal(world);
   if (refusal) return refuse(refusal);
+  // Typed in from paper it may be done before its pieces were; it unlocks nothing until they have passed.
+  if (missingPieces?.length)
+    return no('STEP_NOT_READY', { waitsFor: null, waitsForName: null, waitsForPieces: missingPieces });
   const before = traveller.find((other) => other.position < step.position && other.state !== 'passed');
   if (before) return no('STEP_NOT_READY', { waitsFor: before.id, waitsForName: before.name });
   // Looking at it is what clears its flags: the entry stays in the day log.

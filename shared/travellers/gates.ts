@@ -45,6 +45,8 @@ export interface World {
   step: Step;
   /** All steps of the traveller, by position, the step itself included. */
   traveller: readonly Step[];
+  /** For a field joint: codes of the pieces it still waits for. */
+  missingPieces?: readonly string[];
   /** Other steps at the same station; only the drying ones matter. */
   station: readonly Step[];
   person: PersonFacts;

@@ -44,6 +44,8 @@ export function refusalText(refusal: AnyRefusal, context: RefusalContext): strin
         Array.isArray(details.crew) ? details.crew.map((id) => nameOf(text(id))) : [],
       );
     case 'STEP_NOT_READY':
+      if (Array.isArray(details.waitsForPieces))
+        return refusals.STEP_NOT_READY_PIECES(details.waitsForPieces.map(text));
       return details.waitsForName
         ? refusals.STEP_NOT_READY(text(details.waitsForName))
         : refusals.STEP_NOT_READY_KIT;

@@ -5,7 +5,7 @@ import { hazardGate, missingByHazard } from '../../shared/safety/hazard-gate';
 import { HAZARDS } from '../../shared/safety/hazards';
 import type { StopScope } from '../../shared/safety/stop';
 import type { PersonFacts, World } from '../../shared/travellers/gates';
-import type { Step } from '../../shared/travellers/step';
+import { subAssemblyState, type Step } from '../../shared/travellers/step';
 import type { LiveMaps, LiveState } from './live-state';
 
 type Records = Pick<LiveState, 'records'>;
@@ -91,6 +91,14 @@ function missingFor({ records }: Records, person: PersonRecord, now: number): Pe
   return missing;
 }
 
+/** Codes of the pieces that a field joint still waits for. */
+function missingPieces({ records }: Records, subAssemblyId: string): string[] {
+  const needs = records.subAssemblies.get(subAssemblyId)?.needs ?? [];
+  return needs
+    .filter((id) => subAssemblyState(travellerSteps(records.steps, id)) !== 'passed')
+    .map((id) => records.subAssemblies.get(id)?.code ?? id);
+}
+
 /** Somebody the live state does not know may do nothing. */
 const NOBODY = { confirmed: false, ageBand: 'under-9', duties: [], missing: {} } as const;
 
@@ -141,6 +149,7 @@ export function worldOf(live: Records, personId: string, step: Step, now: number
     now,
     step,
     traveller: lists.ofPiece.get(step.subAssemblyId) ?? [step],
+    missingPieces: missingPieces(live, step.subAssemblyId),
     station: lists.dryingAt.get(step.stationId) ?? [],
     person: personFacts(live, personId, now),
     stops,

@@ -11,6 +11,7 @@ import { newId } from '../../../shared/kernel/ids';
 import type { WriteScope } from '../../db/write';
 import { AppError, notFound } from '../../http/app-error';
 import { assertOpen } from '../installations';
+import { placementsOfFrame } from './drawing.repository';
 import { Frame } from './frame.entity';
 import { loadFrame, touchPieces, usesOfFrame } from './frames.repository';
 
@@ -135,6 +136,14 @@ export async function removeFrame(
       {
         details: { pieces },
       },
+    );
+  }
+  const places = await placementsOfFrame(scope.manager, id);
+  if (places > 0) {
+    throw new AppError(
+      'IN_USE',
+      `This frame stands in the drawing at ${places} ${places === 1 ? 'place' : 'places'}, so it stays. Take it out of the drawing first.`,
+      { details: { places } },
     );
   }
   await scope.manager.update(Frame, { id }, { removedAt: scope.now, revision: await scope.revision() });

@@ -6,6 +6,8 @@ interface RawPiece {
   code: string;
   name: string;
   position: number;
+  kind: 'piece' | 'field joint';
+  needs: string;
   traveller_revision: number;
   revision: number;
   removed_at: number | null;
@@ -22,6 +24,8 @@ export const subAssembliesSource: LiveSource<'subAssemblies'> = {
       code: row.code,
       name: row.name,
       position: row.position,
+      kind: row.kind,
+      needs: JSON.parse(row.needs) as string[],
       travellerRevision: row.traveller_revision,
       removed: row.removed_at !== null,
     })),

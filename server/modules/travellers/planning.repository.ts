@@ -91,3 +91,17 @@ export async function loadPiece(
   );
   return rows[0] ?? null;
 }
+
+/** Codes of the field joints that need a piece. */
+export async function jointsThatNeed(
+  manager: EntityManager,
+  installationId: string,
+  pieceId: string,
+): Promise<string[]> {
+  const rows = await manager.query<{ code: string }[]>(
+    `SELECT code FROM sub_assembly WHERE installation_id = ? AND kind = 'field joint' AND removed_at IS NULL
+       AND EXISTS (SELECT 1 FROM json_each(needs) WHERE value = ?) ORDER BY code`,
+    [installationId, pieceId],
+  );
+  return rows.map((row) => row.code);
+}

@@ -15,6 +15,7 @@ import { assertOpen } from '../installations';
 import {
   claimsOn,
   highestNumber,
+  jointsThatNeed,
   loadPiece,
   loadTemplate,
   piecesOf,
@@ -216,7 +217,7 @@ export async function renameSubAssembly(
 
 /**
  * Take a piece out of the plan with its traveller.
- * @throws AppError IN_USE when somebody ever worked on it
+ * @throws AppError IN_USE when somebody ever worked on it, or it meets other pieces at a field joint
  */
 export async function removeSubAssembly(
   scope: WriteScope,
@@ -232,6 +233,14 @@ export async function removeSubAssembly(
       'IN_USE',
       `${piece.code} was worked on: ${claims} ${claims === 1 ? 'place was' : 'places were'} taken on its steps. It stays; hold it if it is not wanted.`,
       { details: { claims } },
+    );
+  }
+  const joints = await jointsThatNeed(scope.manager, installationId, id);
+  if (joints.length > 0) {
+    throw new AppError(
+      'IN_USE',
+      `${piece.code} meets other pieces at ${joints.join(', ')}. Change the split instead, so that the joints follow.`,
+      { details: { joints } },
     );
   }
   const revision = await scope.revision();

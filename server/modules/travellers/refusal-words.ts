@@ -16,7 +16,9 @@ export function refusalWords({ code, details }: Refusal, step: Pick<Step, 'name'
     case 'STEP_CREW_FULL':
       return `All ${count(details.places)} places on ${step.name} are taken. Take another step.`;
     case 'STEP_NOT_READY':
-      return `${step.name} waits for an earlier step to pass. It opens by itself.`;
+      return Array.isArray(details.waitsForPieces)
+        ? `${step.name} waits until ${details.waitsForPieces.join(' and ')} ${details.waitsForPieces.length === 1 ? 'has' : 'have'} passed. It opens by itself.`
+        : `${step.name} waits for an earlier step to pass. It opens by itself.`;
     case 'STEP_HELD':
       return `${step.name} is held. Ask whoever holds it.`;
     case 'STEP_NOT_HELD':

@@ -42,6 +42,46 @@ export async function loadTraveller(
   return withClaims(manager, rows);
 }
 
+/** What a field joint waits for: the sub-assemblies it needs with their codes, and whether each has passed. */
+export async function loadNeeds(
+  manager: EntityManager,
+  subAssemblyId: string,
+): Promise<{ id: string; code: string; passed: boolean }[]> {
+  const rows = await manager.query<{ id: string; code: string; passed: number }[]>(
+    `SELECT piece.id, piece.code, ${PASSED} AS passed
+     FROM sub_assembly, json_each(sub_assembly.needs) AS need JOIN sub_assembly AS piece ON piece.id = need.value
+     WHERE sub_assembly.id = ? ORDER BY piece.code`,
+    [subAssemblyId],
+  );
+  return rows.map((row) => ({ ...row, passed: row.passed === 1 }));
+}
+
+/** Whether all steps of `piece` have passed, and it has some. */
+const PASSED = `(SELECT count(*) > 0 AND sum(step.state <> 'passed') = 0 FROM step
+  WHERE step.sub_assembly_id = piece.id AND step.removed_at IS NULL)`;
+
+/** Field joints that need a piece, each with its steps and what it needs. */
+export async function loadFieldJointsOf(
+  manager: EntityManager,
+  installationId: string,
+  pieceId: string,
+): Promise<{ needs: { id: string; passed: boolean }[]; steps: LoadedSteps }[]> {
+  const rows = await manager.query<{ id: string }[]>(
+    `SELECT id FROM sub_assembly WHERE installation_id = ? AND kind = 'field joint' AND removed_at IS NULL
+       AND EXISTS (SELECT 1 FROM json_each(needs) WHERE value = ?) ORDER BY position, id`,
+    [installationId, pieceId],
+  );
+  const joints: { needs: { id: string; passed: boolean }[]; steps: LoadedSteps }[] = [];
+  for (const { id } of rows) {
+    const steps = await manager.query<RawStep[]>(
+      'SELECT * FROM step WHERE sub_assembly_id = ? AND removed_at IS NULL ORDER BY position',
+      [id],
+    );
+    joints.push({ needs: await loadNeeds(manager, id), steps: await withClaims(manager, steps) });
+  }
+  return joints;
+}
+
 /** Steps that dry at a station. */
 export async function loadDryingAt(
   manager: EntityManager,

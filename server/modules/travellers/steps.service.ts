@@ -4,6 +4,7 @@ import { DEFAULT_AGE_RULES, tightenAgeRules, type AgeRules } from '../../../shar
 import type { InstallationRecord } from '../../../shared/contracts/live';
 import {
   decide,
+  followPieces,
   type Command,
   type PersonFacts,
   type Step,
@@ -14,6 +15,8 @@ import { activeStops, missingSignOffs } from '../safety';
 import { refusalWords } from './refusal-words';
 import {
   loadDryingAt,
+  loadFieldJointsOf,
+  loadNeeds,
   loadPerson,
   loadSettings,
   loadTraveller,
@@ -84,11 +87,16 @@ export async function commandStep(
     command.type === 'still-wet' ? await loadDryingAt(manager, installationId, step.stationId) : none();
   // Stops and sign-offs concern steps with a hazard or a tool; for the others there is nothing to look up.
   const dangerous = step.hazards.length > 0 || step.toolKinds.length > 0;
+  const missingPieces =
+    step.state === 'waiting' || command.type === 'pass'
+      ? (await loadNeeds(manager, step.subAssemblyId)).filter((need) => !need.passed).map((need) => need.code)
+      : [];
   const settings = JSON.parse(installation.settings) as InstallationRecord['settings'];
   const world: World = {
     now,
     step,
     traveller: traveller.steps,
+    missingPieces,
     station: station.steps,
     person: await personFacts(scope, installationId, personId, dangerous && SIGNED_OFF.has(command.type)),
     stops: dangerous && STOPPABLE.has(command.type) ? await activeStops(manager, installationId) : [],
@@ -186,6 +194,7 @@ async function apply(
       throw new AppError('STALE_PAGE', 'Somebody changed this step a moment ago. Look at it again.');
     scope.changed('steps', after.id);
   }
+  await followFieldJoints(scope, installationId, step.subAssemblyId, known, transition, revision);
   await scope.log({
     action: transition.event,
     ...log,
@@ -199,6 +208,45 @@ async function apply(
     flags: transition.flags,
     warnings: transition.warnings,
   };
+}
+
+/** Field joints open when the last of their pieces passes, and close when one of them is sent back. */
+async function followFieldJoints(
+  scope: WriteScope,
+  installationId: string,
+  pieceId: string,
+  known: LoadedSteps,
+  transition: Transition,
+  revision: number,
+): Promise<void> {
+  const before = known.steps.filter((other) => other.subAssemblyId === pieceId);
+  const after = before.map((step) => transition.steps.find((other) => other.id === step.id) ?? step);
+  const all = (steps: readonly Step[]) => steps.every((step) => step.state === 'passed');
+  if (all(before) === all(after)) return;
+  const joints = await loadFieldJointsOf(scope.manager, installationId, pieceId);
+  for (const joint of joints) {
+    const passed = new Map(joint.needs.map((need) => [need.id, need.passed]));
+    const changed = followPieces(
+      pieceId,
+      [{ needs: [...passed.keys()], steps: joint.steps.steps }],
+      (id) => passed.get(id) ?? false,
+    );
+    for (const step of changed) {
+      const old = joint.steps.steps.find((other) => other.id === step.id);
+      const read = joint.steps.revisions.get(step.id);
+      if (!old || read === undefined) throw new Error(`Field joint step ${step.id} was not loaded.`);
+      await saveStep(
+        scope.manager,
+        installationId,
+        old,
+        step,
+        { read, next: revision },
+        transition.event,
+        scope.now,
+      );
+      scope.changed('steps', step.id);
+    }
+  }
 }
 
 /**

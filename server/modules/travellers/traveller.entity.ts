@@ -1,4 +1,5 @@
 import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
+import type { SplitOrigin } from '../../../shared/contracts/split';
 import type { TemplateStep } from '../../../shared/contracts/travellers';
 import type { Hazard } from '../../../shared/safety';
 import type { Clocks, StepStateName } from '../../../shared/travellers';
@@ -26,6 +27,12 @@ export class SubAssembly {
   @Column({ type: 'text' }) code!: string;
   @Column({ type: 'text' }) name!: string;
   @Column({ type: 'integer' }) position!: number;
+  /** A piece that a crew builds, or the joints where pieces meet. */
+  @Column({ type: 'text', default: 'piece' }) kind!: 'piece' | 'field joint';
+  /** Ids of the sub-assemblies that must have passed before its first step is ready. */
+  @Column({ type: 'simple-json', default: '[]' }) needs!: string[];
+  /** Where it lies in the split it was made from. */
+  @Column({ type: 'simple-json', nullable: true }) origin!: SplitOrigin | null;
   @Column({ type: 'integer', name: 'traveller_revision' }) travellerRevision!: number;
   @Column({ type: 'integer' }) revision!: number;
   @Column({ type: 'integer', nullable: true, name: 'removed_at' }) removedAt!: number | null;

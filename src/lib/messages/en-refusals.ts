@@ -8,6 +8,8 @@ export const refusals = {
   STEP_CREW_FULL: (what: string, places: number, names: readonly string[]) =>
     `${what} has ${counted(places, 'place')}, and ${names.length > 0 ? listed(names) : 'somebody'} ${names.length > 1 ? 'have' : 'has'} ${places === 1 ? 'it' : 'them'}. Take another step.`,
   STEP_NOT_READY: (before: string) => `Not before ${before} has passed. It moves up to your list by itself.`,
+  STEP_NOT_READY_PIECES: (codes: readonly string[]) =>
+    `Not before ${listed(codes)} ${codes.length === 1 ? 'has' : 'have'} passed: the pieces meet here. It moves up to your list by itself.`,
   STEP_NOT_READY_KIT: 'Something it needs is not there yet. It moves up to your list by itself.',
   STEP_HELD: (name: string, reason: string) =>
     `Held by ${name}: ${reason} Only ${name} or another safety lead lifts it.`,

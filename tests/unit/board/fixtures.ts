@@ -163,6 +163,8 @@ export const pieceRecord = (change: Partial<SubAssemblyRecord>): SubAssemblyReco
   code: 'V-01',
   name: 'North bay 1',
   position: 1,
+  kind: 'piece',
+  needs: [],
   travellerRevision: 1,
   removed: false,
   ...change,
