@@ -101,7 +101,7 @@ export function assemblyMoves(frame: Frame, flats: readonly Ring[], options: Ass
   const braced = raised.flatMap((move): NextMove[] => {
     const lifted =
       move.kind === 'join' ? move.flat : move.kind === 'strut' && move.hold?.first ? move.hold.flat : null;
-    if (lifted === null) return [move];
+    if (lifted === null || ('lying' in move && move.lying)) return [move];
     const before = beforeLifting(frame, flats[lifted]!, lifted, chords[lifted]!, taped);
     for (const one of before) if (one.kind === 'brace') taped.push(...one.braces);
     return [...before, move];

@@ -78,8 +78,13 @@ export function moveText(move: Move, names: StrutNames, unit: LengthUnit): strin
     `${names.labels[strut] ?? ''}, ${length(names.lengthsMm[strut]!)}`;
   const strutsText = (struts: readonly number[]): string => {
     const kinds = [...new Set(struts.map(described))];
-    if (kinds.length === 1 && struts.length > 1) return `struts ${numbers(struts)} (all ${kinds[0]!})`;
-    return `${word(struts.length, 'strut')} ${joined(struts.map((strut) => `${strut + 1} (${described(strut)})`))}`;
+    return joined(
+      kinds.map((kind) => {
+        const alike = struts.filter((strut) => described(strut) === kind);
+        const many = alike.length === 1 ? '' : alike.length === 2 ? 'both ' : 'all ';
+        return `${word(alike.length, 'strut')} ${numbers(alike)} (${many}${kind})`;
+      }),
+    );
   };
   const [from, to] = [(move.joints[0] ?? 0) + 1, (move.joints[1] ?? 0) + 1];
   const text = (): string => {
@@ -99,13 +104,18 @@ export function moveText(move: Move, names: StrutNames, unit: LengthUnit): strin
           return `Set flat ${move.flat + 1} beside what you have; it touches nothing yet.`;
         return `Hold flat ${move.flat + 1} in its place, so that it meets what you have at ${jointsOf(move.joints)}. Glue it there and hold still until the glue is firm.`;
       case 'raise': {
-        const ends = `from ${jointsOf(move.joints.slice(0, -1))}`;
+        const strut = (at: number) => `strut ${move.struts[at]! + 1} (${described(move.struts[at]!)})`;
         if (move.struts.length === 1)
-          return `Glue ${strutsText(move.struts)} from joint ${from}; its far end is joint ${move.joint + 1}. Prop it until the next strut holds it.`;
-        return `Bring ${strutsText(move.struts)} together ${ends}: where they meet is joint ${move.joint + 1}. Glue all ends and hold still until the glue is firm.`;
+          return `Glue ${strut(0)} from joint ${from}; its far end is joint ${move.joint + 1}. ${
+            move.prop ? 'Prop it until the next strut holds it.' : 'Hold still until the glue is firm.'
+          }`;
+        const each = move.struts.map((_, at) => `${strut(at)} from joint ${move.joints[at]! + 1}`);
+        return `Glue ${joined(each)}, so that they meet: that is joint ${move.joint + 1}. Hold still until the glue is firm.`;
       }
       case 'strut':
-        return `${heldText(move.hold, length)}Glue ${strutsText(move.struts)} from joint ${from} to joint ${to}.`;
+        if (move.lying && move.hold)
+          return `Lay flat ${move.hold.flat + 1} on the bench beside what lies there, as the drawing shows. Glue ${strutsText(move.struts)} from joint ${from} to joint ${to}.`;
+        return `${move.lying ? 'On the bench: glue' : `${heldText(move.hold, length)}Glue`} ${strutsText(move.struts)} from joint ${from} to joint ${to}.`;
       case 'glue-out':
         return `Second layer: go round ${jointsOf(move.joints)} with glue, from all sides. Let it cool.${
           move.open.length === 0

@@ -19,6 +19,7 @@ type Step = {
  * - `brace`: a temporary stick or board, before a flat is lifted (`flat`) or before the whole is turned and glued out (`flat` null)
  * - `join`: a flat meets what is there at joints they share · `raise`: struts that meet at a new joint in the air
  * - `strut`: a strut between two joints that are there; with `hold` a flat is held in its place for it
+ *   `lying`: all of it stays on the bench, in the plane of the first flat
  * - `glue-out`: the second layer · `take-off`: the braces · `clean`: strings of glue · `mark`: tape where neighbours meet
  */
 export type Move = Step &
@@ -34,15 +35,16 @@ export type Move = Step &
         /** In how many ways it can still move, as if every joint were a pin. */
         mechanisms: number;
       }
-    | { kind: 'join'; flat: number }
+    | { kind: 'join'; flat: number; lying: boolean }
     | {
         kind: 'raise';
         /** The new joint. */
         joint: number;
         /** Its struts do not hold it by themselves: it is propped until the next ones do. */
         prop: boolean;
+        lying: boolean;
       }
-    | { kind: 'strut'; hold: Hold | null }
+    | { kind: 'strut'; hold: Hold | null; lying: boolean }
     | {
         kind: 'glue-out';
         /** Of those, joints that other pieces are joined to on site. */

@@ -1,3 +1,5 @@
+import { ringEdges } from '../../frames/edge-key';
+import type { Frame } from '../../frames/frame';
 import { add, cross, distance, dot, scale, size, subtract, unit } from '../../frames/vector';
 import type { Vector } from '../../frames/vector';
 import { centreOf } from './rigid-motion';
@@ -92,6 +94,23 @@ function inside(ring: readonly Flat[], p: Flat): boolean {
   return found;
 }
 
+/** The disc that a planar ring spans. */
+type Disc = { plane: RingPlane; corners: Flat[] };
+
+function discOf(ring: Ring, joints: readonly Vector[]): Disc {
+  const points = ring.joints.map((joint) => joints[joint]!);
+  const plane = ringPlane(points);
+  return { plane, corners: onPlane(plane, points) };
+}
+
+/** Whether the line from p to q goes through the inside of a disc, from one side to the other. */
+function pierces({ plane, corners }: Disc, p: Vector, q: Vector): boolean {
+  const [from, to] = [above(plane, p), above(plane, q)];
+  if (from > 0 === to > 0) return false;
+  const cut = add(p, scale(subtract(q, p), from / (from - to)));
+  return inside(corners, onPlane(plane, [cut])[0]!);
+}
+
 /**
  * Whether two rings hang in each other like links of a chain, so that not both can be closed before they are put together.
  * @param a a planar ring
@@ -103,17 +122,21 @@ function inside(ring: readonly Flat[], p: Flat): boolean {
 export function areLinked(a: Ring, b: Ring, joints: readonly Vector[]): boolean {
   const shared = new Set(a.joints);
   if (b.joints.some((joint) => shared.has(joint))) return false;
-  const corners = a.joints.map((joint) => joints[joint]!);
-  const plane = ringPlane(corners);
-  const disc = onPlane(plane, corners);
-  const through = b.joints.map((joint) => joints[joint]!);
-  let crossings = 0;
-  through.forEach((p, at) => {
-    const q = through[(at + 1) % through.length]!;
-    const [from, to] = [above(plane, p), above(plane, q)];
-    if (from > 0 === to > 0) return;
-    const cut = add(p, scale(subtract(q, p), from / (from - to)));
-    if (inside(disc, onPlane(plane, [cut])[0]!)) crossings++;
-  });
-  return crossings % 2 === 1;
+  const disc = discOf(a, joints);
+  const crossings = ringEdges(b.joints).filter(([p, q]) => pierces(disc, joints[p]!, joints[q]!));
+  return crossings.length % 2 === 1;
+}
+
+/**
+ * Struts that go through the inside of a ring: the closed ring cannot be brought to its place once they are in.
+ * @param ring a planar ring
+ * @param frame the frame it belongs to, mm
+ * @returns indexes of struts that touch no joint of the ring
+ */
+export function strutsThrough(ring: Ring, { joints, struts }: Frame): number[] {
+  const own = new Set(ring.joints);
+  const disc = discOf(ring, joints);
+  return struts.flatMap(([a, b], strut) =>
+    !own.has(a) && !own.has(b) && pierces(disc, joints[a]!, joints[b]!) ? [strut] : [],
+  );
 }
