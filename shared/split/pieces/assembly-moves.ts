@@ -44,9 +44,12 @@ function beforeLifting(
   taken: readonly Brace[],
 ): NextMove[] {
   const across = chords.map((strut) => frame.struts[strut]!);
-  const { mechanisms, braces } = flatBraces(ring, across, frame.joints, taken);
+  const { mechanisms, braces } = flatBraces(ring, across, frame.joints, {
+    last: taken,
+    never: frame.struts,
+  });
   if (mechanisms === 0) return [];
-  const board = mechanisms > MOST_BRACES;
+  const board = mechanisms > MOST_BRACES || braces.length < mechanisms;
   const sticks = board ? [] : braces;
   return [{ kind: 'brace', flat, struts: [], joints: sticks.flat(), braces: sticks, board, mechanisms }];
 }

@@ -45,7 +45,7 @@ function taken(
  * @param rings candidates
  * @param scores per ring what decides between choices with as many struts in as many flats
  * @param linked whether two rings hang in each other
- * @param mostTries how many branches are looked at before it stops
+ * @param most how many rings, over all branches, are looked at before it stops
  * @returns indexes of rings without a common strut, and `proven` only when every branch was looked at or cut off
  * Source: own. Bound: at each joint an even number of struts stands in rings.
  */
@@ -53,7 +53,7 @@ export function searchFlats(
   rings: readonly Ring[],
   scores: readonly number[],
   linked: (a: number, b: number) => boolean,
-  mostTries: number,
+  most: number,
 ): RingChoice {
   const all = rings.map((_, ring) => ring);
   const length = (ring: number): number => rings[ring]!.struts.length;
@@ -70,11 +70,12 @@ export function searchFlats(
   };
   for (const order of starts) offer(taken(rings, order, linked));
 
-  let tries = 0;
+  let looked = 0;
   const chosen: number[] = [];
   /** @param open rings that can still be taken; none shares a strut with a chosen one */
   const branch = (open: readonly number[], struts: number): void => {
-    if (tries++ > mostTries) return;
+    if (looked > most) return;
+    looked += open.length + 1;
     offer(chosen);
     const ringsAt = new Map<number, number>();
     const strutsAt = new Map<number, Set<number>>();
@@ -90,10 +91,13 @@ export function searchFlats(
       });
     let ends = 0;
     for (const list of strutsAt.values()) ends += list.size - (list.size % 2);
-    const most = struts + ends / 2;
-    if (most < bestValue.struts) return;
+    const reachable = struts + ends / 2;
+    if (reachable < bestValue.struts) return;
     const longest = open.reduce((a, ring) => Math.max(a, length(ring)), 1);
-    if (most === bestValue.struts && chosen.length + Math.ceil((most - struts) / longest) > bestValue.flats)
+    if (
+      reachable === bestValue.struts &&
+      chosen.length + Math.ceil((reachable - struts) / longest) > bestValue.flats
+    )
       return;
 
     let strut: number | undefined;
@@ -123,5 +127,5 @@ export function searchFlats(
     branch(rest, struts);
   };
   branch(all, 0);
-  return { chosen: best, proven: tries <= mostTries };
+  return { chosen: best, proven: looked <= most };
 }

@@ -29,7 +29,8 @@ export type FlatsOptions = {
 };
 
 const SECONDS = 10;
-const TRIES = 4_000;
+/** Rings that the search without a solver looks at: a few tenths of a second. */
+const LOOKS = 60_000;
 /** Rings that hang in each other are found one choice at a time; far more rounds than any frame was seen to need. */
 const ROUNDS = 40;
 /** More than any sum of tilts can reach, so that size decides before tilt. */
@@ -198,7 +199,7 @@ export function chooseFlats(frame: Frame, options: FlatsOptions = {}): Flats {
   };
   const { solver, seconds = SECONDS } = options;
   const exact = solver && rings.length > 0 ? solved(rings, scores, linked, solver, seconds) : null;
-  const own = exact?.proven ? null : searchFlats(rings, scores, linked, TRIES);
+  const own = exact?.proven ? null : searchFlats(rings, scores, linked, LOOKS);
   const better = (a: RingChoice, b: RingChoice): RingChoice =>
     isBetter(valueOf(rings, scores, b.chosen), valueOf(rings, scores, a.chosen)) ? b : a;
   const choice = exact && own ? better(exact, own) : (exact ?? own ?? { chosen: [], proven: true });

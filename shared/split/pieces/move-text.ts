@@ -100,6 +100,8 @@ export function moveText(move: Move, names: StrutNames, unit: LengthUnit): strin
       case 'brace':
         return braceText(move);
       case 'join':
+        if (move.lying && move.joints.length > 0)
+          return `Slide flat ${move.flat + 1} over the bench to what lies there, so that they meet at ${jointsOf(move.joints)}. Glue it there.`;
         if (move.joints.length === 0)
           return `Set flat ${move.flat + 1} beside what you have; it touches nothing yet.`;
         return `Hold flat ${move.flat + 1} in its place, so that it meets what you have at ${jointsOf(move.joints)}. Glue it there and hold still until the glue is firm.`;
