@@ -26,6 +26,7 @@ const server: UserConfig = {
     rolldownOptions: {
       input: {
         main: 'server/main.ts',
+        worker: 'server/jobs/worker.ts',
         demo: 'server/cli/demo.ts',
         'verify-register': 'server/cli/verify-register.ts',
       },

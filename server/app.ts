@@ -22,6 +22,8 @@ import { Principals } from './http/principal';
 import type { AnyRoute } from './http/route';
 import { sessionLayer, type SessionLayer } from './http/session';
 import { startJobs } from './jobs';
+import { Runs } from './jobs/runs';
+import { WorkerPool } from './jobs/worker-pool';
 import { allRoutes, liveSources } from './modules';
 import { Hub } from './realtime/hub';
 import { LiveReader } from './realtime/live-reader';
@@ -47,6 +49,7 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
   const reader = new LiveReader(data.readHandle, liveSources, clock);
   const principals = new Principals(data.readHandle);
   const sessions = new SessionStore(unitOfWork, data.readHandle, clock);
+  const pool = new WorkerPool();
   const live: { hub?: Hub; publisher?: Publisher } = {};
   let wakeMail: () => void = () => undefined;
   const writer = new Writer({
@@ -73,6 +76,8 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
     principals,
     sessions,
     reader,
+    pool,
+    runs: new Runs(pool, clock),
     endSessions: async (key, exceptSid) => {
       await sessions.endAllOf(key, exceptSid);
       live.hub?.endAllOf(key);
@@ -103,6 +108,7 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
     routes,
     close: async () => {
       await jobs.stop();
+      await pool.close();
       await live.hub?.close();
       listener.closeAllConnections();
       await unitOfWork.idle();

@@ -6,6 +6,8 @@ import type { SessionStore } from './http/session-store';
 import type { UnitOfWork } from './db/unit-of-work';
 import type { Writer } from './db/write';
 import type { Principals } from './http/principal';
+import type { Runs } from './jobs/runs';
+import type { WorkerPool } from './jobs/worker-pool';
 import type { LiveReader } from './realtime/live-reader';
 
 /** What every module is built from. */
@@ -19,6 +21,9 @@ export interface Deps {
   principals: Principals;
   sessions: SessionStore;
   reader: LiveReader;
+  /** Long computations, off the request's thread. */
+  pool: WorkerPool;
+  runs: Runs;
   /** End every session of `account:ID`, `person:ID` or `display:ID` and cut its sockets off; `exceptSid` stays. */
   endSessions(key: string, exceptSid?: string): Promise<void>;
   /** Cut off the open pages of one session, by its id. */

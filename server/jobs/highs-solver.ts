@@ -117,7 +117,8 @@ class Opened implements OpenProgram {
     });
     this.model.run();
     const code = this.model.getModelStatus();
-    const found = code === OPTIMAL || Number(this.model.info.get('primal_solution_status')) === FEASIBLE_POINT;
+    const found =
+      code === OPTIMAL || Number(this.model.info.get('primal_solution_status')) === FEASIBLE_POINT;
     const status = statusOf(code, found);
     if (!found || status === 'infeasible' || status === 'unbounded') {
       const worst = this.minimise ? -Infinity : Infinity;

@@ -39,7 +39,7 @@ export class Runs {
   ): RunView {
     this.forget();
     const active = [...this.runs.values()].find(
-      (run) => run.installationId === installationId && run.key === key && run.status === 'running',
+      (run) => run.installationId === installationId && run.key === key && run.endedAt === null,
     );
     if (active) {
       throw new AppError('RUN_ACTIVE', 'This is being computed already. Wait for it, or stop it first.', {
@@ -60,11 +60,11 @@ export class Runs {
     };
     this.runs.set(run.id, run);
     const running = this.pool.run(kind, input, ({ share, note }) => Object.assign(run, { share, note }));
-    run.running = running as Running<unknown>;
+    run.running = running;
     void running.result.then(then).then(
       (result) => this.end(run, { status: run.status === 'running' ? 'done' : 'stopped', share: 1, result }),
       (error: unknown) => {
-        if (run.status === 'stopped') this.end(run, {});
+        if (run.status === 'stopping') this.end(run, { status: 'stopped' });
         else this.end(run, { status: 'failed', problem: problemOf(error) });
       },
     );
@@ -80,7 +80,7 @@ export class Runs {
   stop(installationId: string, id: string): RunView {
     const run = this.of(installationId, id);
     if (run.status === 'running') {
-      run.status = 'stopped';
+      run.status = 'stopping';
       run.running?.stop();
     }
     return viewOf(run);

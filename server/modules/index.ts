@@ -10,6 +10,7 @@ import { mailRoutes } from './mail';
 import { addFirstOrganiser, peopleLive, peopleRoutes } from './people';
 import { progressRoutes } from './progress';
 import { installShippedBriefings, safetyLive, safetyRoutes } from './safety';
+import { splitRoutes } from './split';
 import { travellersLive, travellersRoutes } from './travellers';
 
 /** What areas add to an installation that was just made; they know of installations, not the other way round. */
@@ -27,6 +28,7 @@ export const allRoutes = (deps: Deps, layer: SessionLayer): AnyRoute[] => [
   ...peopleRoutes(deps, layer),
   ...safetyRoutes(deps),
   ...framesRoutes(deps),
+  ...splitRoutes(deps),
   ...cribRoutes(),
   ...travellersRoutes(deps),
   ...progressRoutes(deps),

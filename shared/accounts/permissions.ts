@@ -88,6 +88,8 @@ export const PERMISSIONS = {
   // frames and travellers
   'frame.read': { site: ADMIN_SITE, duties: DUTIES, display: true },
   'frame.edit': { site: ADMIN_SITE, duties: ORGANISERS },
+  'split.read': { site: ADMIN_SITE, duties: LEADS },
+  'split.edit': { site: ADMIN_SITE, duties: ORGANISERS },
   'sub-assembly.edit': { site: ADMIN_SITE, duties: ORGANISERS },
   'template.read': { site: ADMIN_SITE, duties: LEADS },
   'template.edit': { site: ADMIN_SITE, duties: ORGANISERS },

@@ -14,12 +14,18 @@ export const createFrameSchema = z.discriminatedUnion('kind', [
 ]);
 export type CreateFrame = z.infer<typeof createFrameSchema>;
 
+/** Where a frame's geometry came from: a shape with its measures, a file, or a split that made a piece of the drawing. */
+export type FrameSource =
+  | { kind: 'shape'; shape: Shape }
+  | { kind: 'obj'; fileName: string }
+  | { kind: 'piece'; splitId: string; group: number };
+
 /** A frame with its geometry and figures; mm throughout. */
 export interface FrameView {
   id: string;
   name: string;
   revision: number;
-  source: { kind: 'shape'; shape: Shape } | { kind: 'obj'; fileName: string };
+  source: FrameSource;
   geometry: Frame;
   subAssemblies: number;
 }

@@ -1,7 +1,8 @@
 /** A long computation as a screen sees it. */
 export interface RunView {
   id: string;
-  status: 'running' | 'done' | 'stopped' | 'failed';
+  /** `stopping`: somebody asked it to stop, and it ends within a second. */
+  status: 'running' | 'stopping' | 'done' | 'stopped' | 'failed';
   /** 0 to 1. */
   share: number;
   /** A few words on what it is doing. */

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import type { Frame } from '../frames';
-import type { Flats, Motion, Move } from '../split';
+import type { Flats, Motion, Move, PieceMark, PieceMeeting } from '../split';
 import { codeLetterSchema } from './travellers';
 
 const mm = z.number().positive().max(100_000);
@@ -38,15 +38,6 @@ export const DEFAULT_SPLIT_WISH: SplitWish = {
 
 /** A strut of the drawing by where it comes from, so that it is found again when the drawing has changed. */
 export type StrutKey = [placementId: string, copy: number, strut: number];
-
-/** How a piece is told from its neighbours without relying on colour alone. */
-export interface PieceMark {
-  letter: string;
-  /** Name of a line pattern. */
-  pattern: string;
-  /** Name of a colour token. */
-  colour: string;
-}
 
 /** One piece of a split. */
 export interface SplitPiece {
@@ -86,6 +77,8 @@ export interface SplitMeeting {
   b: string;
   /** Joints of the drawing, from 0. */
   joints: number[];
+  /** The highest of them over the lowest joint of the drawing. */
+  heightMm: number;
 }
 
 /** What the split says of itself. */
@@ -157,3 +150,23 @@ export const takeSplitSchema = z.strictObject({
   revision: z.number().int(),
 });
 export type TakeSplit = z.infer<typeof takeSplitSchema>;
+
+/** The sheet of one piece: what a beginner needs to make it. */
+export interface PieceSheet {
+  id: string;
+  code: string;
+  name: string;
+  travellerRevision: number;
+  /** Joints in mm with the numbers that the moves use, counted from 0. */
+  frame: Frame;
+  mark: PieceMark | null;
+  hand: 'left' | 'right' | null;
+  massKg: number | null;
+  /** Null for a piece that was made without a split. */
+  flats: Flats | null;
+  moves: Move[];
+  /** Where other pieces meet it on site. */
+  meetings: PieceMeeting[];
+  /** Codes of pieces made from the same drawing. */
+  alike: string[];
+}

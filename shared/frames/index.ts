@@ -16,3 +16,9 @@ export type { DrawnJoint, DrawnStrut, FlatDrawing, FlatDrawingOptions } from './
 export type { Dimension } from './dimensions';
 export type { View, ViewTaken } from './projection';
 export { assemblyOrder } from './assembly-order';
+export { copiesOf, copyPlaces, placeFrame } from './placing';
+export type { CopyPlace, Pattern, Place } from './placing';
+export { densityOf, SPECIES, stickKg, stickSurface } from './wood';
+export type { Species } from './wood';
+export { joinDrawing } from './drawing';
+export type { JoinedDrawing, PlacedFrame, StrutSource } from './drawing';

@@ -29,10 +29,10 @@ const PLACEMENTS =
 
 /** Whatever was changed last counts, removed placements too: without it the drawing looks another way. */
 const REVISION = `SELECT max(
-    coalesce((SELECT max(revision) FROM placement WHERE installation_id = :id), 0),
+    coalesce((SELECT max(revision) FROM placement WHERE installation_id = ?), 0),
     coalesce((SELECT max(frame.revision) FROM frame JOIN placement ON placement.frame_id = frame.id
-              WHERE placement.installation_id = :id AND placement.removed_at IS NULL), 0),
-    coalesce((SELECT revision FROM drawing_settings WHERE installation_id = :id), 0)
+              WHERE placement.installation_id = ? AND placement.removed_at IS NULL), 0),
+    coalesce((SELECT revision FROM drawing_settings WHERE installation_id = ?), 0)
   ) AS revision`;
 
 /** The drawing of an installation, read in one go. */
@@ -43,7 +43,9 @@ export function drawingOf(db: Database.Database, installationId: string): Drawin
       db,
       'SELECT settings, revision FROM drawing_settings WHERE installation_id = ?',
     ).get(installationId);
-    const revision = prepared<{ revision: number }>(db, REVISION).get({ id: installationId })?.revision ?? 0;
+    const revision =
+      prepared<{ revision: number }>(db, REVISION).get(installationId, installationId, installationId)
+        ?.revision ?? 0;
     return {
       settings: row ? (JSON.parse(row.settings) as DrawingSettings) : DEFAULT_DRAWING_SETTINGS,
       settingsRevision: row?.revision ?? 0,
@@ -51,6 +53,16 @@ export function drawingOf(db: Database.Database, installationId: string): Drawin
       revision,
     };
   })();
+}
+
+/** The drawing's revision inside a unit of work. */
+export async function loadDrawingRevision(manager: EntityManager, installationId: string): Promise<number> {
+  const rows = await manager.query<{ revision: number }[]>(REVISION, [
+    installationId,
+    installationId,
+    installationId,
+  ]);
+  return rows[0]?.revision ?? 0;
 }
 
 /** One placement that has not been removed. */

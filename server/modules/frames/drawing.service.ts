@@ -4,6 +4,7 @@ import {
   type PlacementInput,
   type PlacementPattern,
 } from '../../../shared/contracts/drawing';
+import { copiesOf } from '../../../shared/frames';
 import { newId } from '../../../shared/kernel/ids';
 import type { WriteScope } from '../../db/write';
 import { AppError, fieldError, notFound } from '../../http/app-error';
@@ -11,19 +12,6 @@ import { assertOpen } from '../installations';
 import { DrawingSettingsRow, Placement } from './drawing.entity';
 import { loadDrawingSettings, loadPlacement, strutsPlaced } from './drawing.repository';
 import { loadFrame } from './frames.repository';
-
-/** How many frames a pattern sets out. */
-export function copiesOf(pattern: PlacementPattern): number {
-  switch (pattern.kind) {
-    case 'single':
-      return 1;
-    case 'row':
-    case 'ring':
-      return pattern.count;
-    case 'grid':
-      return pattern.counts.x * pattern.counts.y * pattern.counts.z;
-  }
-}
 
 const stale = (name: string, revision: number) =>
   new AppError(

@@ -1,5 +1,6 @@
 import { Column, Entity, Index, PrimaryColumn } from 'typeorm';
-import type { Frame as FrameGeometry, Shape } from '../../../shared/frames';
+import type { FrameSource } from '../../../shared/contracts/frames';
+import type { Frame as FrameGeometry } from '../../../shared/frames';
 
 /** One wireframe shape of an installation. */
 @Entity({ name: 'frame' })
@@ -9,8 +10,7 @@ export class Frame {
   @Column({ type: 'text', name: 'installation_id' }) installationId!: string;
   @Column({ type: 'text' }) name!: string;
   /** Where the geometry came from: a shape with its measures, or a file. */
-  @Column({ type: 'simple-json' }) source!:
-    { kind: 'shape'; shape: Shape } | { kind: 'obj'; fileName: string };
+  @Column({ type: 'simple-json' }) source!: FrameSource;
   /** Joints in mm, struts and faces by joint index. */
   @Column({ type: 'simple-json' }) geometry!: FrameGeometry;
   @Column({ type: 'integer' }) revision!: number;

@@ -1,2 +1,4 @@
 export { framesRoutes } from './frames.routes';
-export { loadFrame } from './frames.repository';
+export { Frame } from './frame.entity';
+export { drawingOf, loadDrawingRevision } from './drawing.repository';
+export { framesOf, loadFrame } from './frames.repository';

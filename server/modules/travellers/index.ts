@@ -7,6 +7,8 @@ import { stepsSource } from './steps.live';
 import { stepsRoutes } from './steps.routes';
 
 export { endDueDrying } from './drying.job';
+export { codeOf, insertPieces, redrawPiece, rehomePiece, retirePiece, type NewPiece } from './pieces.service';
+export { highestNumber, loadTemplate } from './planning.repository';
 export { ageRulesOf, releasePlaces } from './steps.service';
 
 export const travellersRoutes = (deps: Deps): AnyRoute[] => [...planningRoutes(deps), ...stepsRoutes()];

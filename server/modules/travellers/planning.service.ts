@@ -7,7 +7,6 @@ import type {
 } from '../../../shared/contracts/travellers';
 import { cutCount, jointCount } from '../../../shared/frames';
 import { newId } from '../../../shared/kernel/ids';
-import { plannedSeconds } from '../../../shared/travellers';
 import type { WriteScope } from '../../db/write';
 import { AppError, fieldError, notFound } from '../../http/app-error';
 import { loadFrame } from '../frames';
@@ -21,13 +20,12 @@ import {
   piecesOf,
   stationIds,
 } from './planning.repository';
-import { StepRow, SubAssembly, TravellerTemplate } from './traveller.entity';
+import { codeOf, insertPieces, retirePiece } from './pieces.service';
+import { SubAssembly, TravellerTemplate } from './traveller.entity';
 
 type TemplateInput = z.infer<typeof templateSchema>;
 type PiecesInput = z.infer<typeof createSubAssembliesSchema>;
 
-/** SQLite takes 32,766 values in one statement; a step has 24. */
-const STEPS_AT_ONCE = 200;
 /** A code that is read aloud has at most three figures. */
 const HIGHEST_NUMBER = 999;
 
@@ -131,7 +129,6 @@ export async function createSubAssemblies(
   if (!template)
     throw fieldError('templateId', 'unknown', 'This template is not there any more. Choose another one.');
   await guardStations(scope, installationId, template.steps);
-  const revision = await scope.revision();
   const from = await highestNumber(scope.manager, installationId, input.letter);
   if (from + input.quantity > HIGHEST_NUMBER) {
     throw fieldError(
@@ -140,64 +137,22 @@ export async function createSubAssemblies(
       `${input.letter} has ${HIGHEST_NUMBER} codes and ${Math.max(0, HIGHEST_NUMBER - from)} left, not ${input.quantity}. Take another letter.`,
     );
   }
+  const counts = { cuts: cutCount(frame.geometry), joints: jointCount(frame.geometry) };
   const pieces = Array.from({ length: input.quantity }, (_, index) => ({
     id: newId(),
-    installationId,
     frameId: frame.id,
-    templateId: template.id,
-    code: `${input.letter}-${String(from + index + 1).padStart(2, '0')}`,
+    code: codeOf(input.letter, from + index + 1),
     name: input.quantity > 1 ? `${input.name} ${index + 1}` : input.name,
     position: from + index + 1,
-    travellerRevision: 1,
-    revision,
-    removedAt: null,
+    counts,
   }));
-  const counts = { cuts: cutCount(frame.geometry), joints: jointCount(frame.geometry) };
-  const steps = pieces.flatMap((piece) =>
-    template.steps.map((step, index) => stepRow(step, index, piece, counts)),
-  );
-  await scope.manager.insert(SubAssembly, pieces);
-  for (let at = 0; at < steps.length; at += STEPS_AT_ONCE) {
-    await scope.manager.insert(StepRow, steps.slice(at, at + STEPS_AT_ONCE));
-  }
-  for (const piece of pieces) scope.changed('subAssemblies', piece.id);
-  for (const step of steps) scope.changed('steps', step.id);
+  await insertPieces(scope, installationId, pieces, template);
   const ids = pieces.map((piece) => piece.id);
   await scope.log({
     action: 'sub-assembly.added',
     subject: { ids, frameId: frame.id, templateId: template.id },
   });
   return { ids, codes: pieces.map((piece) => piece.code) };
-}
-
-function stepRow(
-  { minutes, needsCheck, ...step }: TemplateStep,
-  index: number,
-  piece: { id: string; installationId: string; revision: number },
-  counts: { cuts: number; joints: number },
-) {
-  return {
-    id: newId(),
-    installationId: piece.installationId,
-    subAssemblyId: piece.id,
-    position: index + 1,
-    ...step,
-    plannedSeconds: plannedSeconds(minutes, counts),
-    needsCheck: needsCheck ? 1 : 0,
-    state: index === 0 ? ('ready' as const) : ('waiting' as const),
-    held: null,
-    startedAt: null,
-    finishedAt: null,
-    finishedBy: null,
-    dryUntil: null,
-    passedAt: null,
-    passedBy: null,
-    rework: null,
-    handOver: null,
-    flags: [],
-    revision: piece.revision,
-    removedAt: null,
-  };
 }
 
 /** Give a piece another name; its code stays. */
@@ -243,14 +198,7 @@ export async function removeSubAssembly(
       { details: { joints } },
     );
   }
-  const revision = await scope.revision();
-  await scope.manager.update(SubAssembly, { id }, { removedAt: scope.now, revision });
-  const steps = await scope.manager.query<{ id: string }[]>(
-    'UPDATE step SET removed_at = ?, revision = ? WHERE sub_assembly_id = ? RETURNING id',
-    [scope.now, revision, id],
-  );
-  scope.changed('subAssemblies', id);
-  for (const step of steps) scope.changed('steps', step.id);
+  await retirePiece(scope, id);
   await scope.log({ action: 'sub-assembly.removed', subject: { subAssemblyId: id } });
   return { id };
 }

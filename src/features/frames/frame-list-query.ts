@@ -11,7 +11,8 @@ export function useFrameList(installationId: string) {
     queryKey: [...framesKey(installationId), 'list', pieces],
     queryFn: async () => {
       const frames = await get<FrameView[]>(`/installations/${installationId}/frames`);
-      return frames.sort((a, b) => a.name.localeCompare(b.name));
+      // Patterns of the split are drawn where their pieces are; they are nobody's to place or change.
+      return frames.filter((frame) => frame.source.kind !== 'piece').sort((a, b) => a.name.localeCompare(b.name));
     },
     placeholderData: (before) => before,
   });

@@ -67,9 +67,7 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
         <>
           <div className="flex flex-wrap items-center gap-x-6 gap-y-2">
             <span className="text-pencil">
-              {source.kind === 'obj'
-                ? `From the file ${source.fileName}`
-                : source.shape.kind.replace('-', ' ')}
+              {sourceWords(source)}
             </span>
             {mayEdit && (
               <>
@@ -99,4 +97,15 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
       )}
     </section>
   );
+}
+
+function sourceWords(source: FrameView['source']): string {
+  switch (source.kind) {
+    case 'shape':
+      return source.shape.kind.replace('-', ' ');
+    case 'obj':
+      return `From the file ${source.fileName}`;
+    case 'piece':
+      return 'A pattern of the split';
+  }
 }

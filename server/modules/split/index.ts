@@ -1,0 +1,1 @@
+export { splitRoutes } from './split.routes';
