@@ -72,7 +72,7 @@ export function searchFlats(
 
   let looked = 0;
   const chosen: number[] = [];
-  /** @param open rings that can still be taken; none shares a strut with a chosen one */
+  // `open` are rings that can still be taken; none shares a strut with a chosen one.
   const branch = (open: readonly number[], struts: number): void => {
     if (looked > most) return;
     looked += open.length + 1;
