@@ -1,5 +1,6 @@
 import type { Frame } from '../../frames/frame';
-import type { LinearProgram, LinearSolver, ProgramColumn, ProgramRow } from '../../kernel/linear-program';
+import type { LinearSolver } from '../../kernel/linear-program';
+import { solveFlats } from './flats-program';
 import { isBetter, searchFlats, valueOf } from './flats-search';
 import type { RingChoice } from './flats-search';
 import { planarRings, RING_LIMITS } from './planar-rings';
@@ -48,104 +49,6 @@ function scoreOf(ring: Ring, frame: Frame): number {
   return SIZE_BEFORE_TILT * ring.struts.length ** 2 - tilt;
 }
 
-/** Each strut in at most one ring, of rings that hang in each other at most one. */
-function program(
-  rings: readonly Ring[],
-  apart: readonly [number, number][],
-  costs: readonly number[],
-): LinearProgram {
-  const rows: ProgramRow[] = [];
-  const entries: [number, number][][] = rings.map(() => []);
-  const atMost = (upper: number, members: Iterable<number>): void => {
-    for (const ring of members) entries[ring]!.push([rows.length, 1]);
-    rows.push({ lower: -Infinity, upper });
-  };
-  const ringsOf = new Map<number, Set<number>>();
-  const ringsAt = new Map<number, Set<number>>();
-  const strutsAt = new Map<number, Set<number>>();
-  const note = (map: Map<number, Set<number>>, key: number, value: number): void => {
-    const list = map.get(key);
-    if (list) list.add(value);
-    else map.set(key, new Set([value]));
-  };
-  rings.forEach(({ joints, struts }, ring) => {
-    struts.forEach((strut, at) => {
-      note(ringsOf, strut, ring);
-      for (const joint of [joints[at]!, joints[(at + 1) % joints.length]!]) note(strutsAt, joint, strut);
-    });
-    for (const joint of joints) note(ringsAt, joint, ring);
-  });
-  for (const members of ringsOf.values()) atMost(1, members);
-  // A ring takes two struts of a joint, so of an odd number one is left: follows from the above only in whole numbers, and saves
-  // the solver most of its branching.
-  for (const [joint, members] of ringsAt) {
-    const struts = strutsAt.get(joint)!.size;
-    if (struts % 2 === 1) atMost((struts - 1) / 2, members);
-  }
-  for (const pair of apart) atMost(1, pair);
-  const columns = entries.map((own, ring): ProgramColumn => ({
-    cost: costs[ring]!,
-    lower: 0,
-    upper: 1,
-    integer: true,
-    entries: own,
-  }));
-  return { sense: 'maximise', rows, columns };
-}
-
-/** The program with one more condition on the sum of a figure over the chosen rings. */
-function where(base: LinearProgram, figures: readonly number[], lower: number, upper: number): LinearProgram {
-  return {
-    ...base,
-    rows: [...base.rows, { lower, upper }],
-    columns: base.columns.map((column, ring) => ({
-      ...column,
-      entries: [...column.entries, [base.rows.length, figures[ring]!] as const],
-    })),
-  };
-}
-
-const withCosts = (base: LinearProgram, costs: readonly number[]): LinearProgram => ({
-  ...base,
-  columns: base.columns.map((column, ring) => ({ ...column, cost: costs[ring]! })),
-});
-
-/** First as many struts as possible, then as few flats, then the best score; each keeps what was reached before it. */
-function solveInTurn(
-  rings: readonly Ring[],
-  scores: readonly number[],
-  apart: readonly [number, number][],
-  solver: LinearSolver,
-  seconds: number,
-): RingChoice | null {
-  const sizes = rings.map(({ struts }) => struts.length);
-  const ones = rings.map(() => 1);
-  const pick = (values: readonly number[]): number[] =>
-    values.flatMap((value, ring) => (value > 0.5 ? [ring] : []));
-  const sum = (chosen: readonly number[], of: readonly number[]): number =>
-    chosen.reduce((total, ring) => total + of[ring]!, 0);
-
-  const base = program(rings, apart, sizes);
-  const first = solver.solve(base, { seconds });
-  if (first.values.length === 0) return null;
-  let chosen = pick(first.values);
-  const proven = first.status === 'optimal';
-  const kept = where(base, sizes, sum(chosen, sizes), Infinity);
-  const second = solver.solve(
-    withCosts(
-      kept,
-      ones.map((one) => -one),
-    ),
-    { seconds: seconds / 2 },
-  );
-  if (second.values.length > 0) chosen = pick(second.values);
-  const third = solver.solve(withCosts(where(kept, ones, -Infinity, chosen.length), scores), {
-    seconds: seconds / 2,
-  });
-  if (third.values.length > 0) chosen = pick(third.values);
-  return { chosen, proven };
-}
-
 /** The first two chosen rings that hang in each other. */
 function linkedPair(
   chosen: readonly number[],
@@ -165,7 +68,7 @@ function solved(
 ): RingChoice | null {
   const apart: [number, number][] = [];
   for (let round = 0; round < ROUNDS; round++) {
-    const choice = solveInTurn(rings, scores, apart, solver, seconds);
+    const choice = solveFlats(rings, scores, apart, solver, seconds);
     if (!choice) return null;
     const pair = linkedPair(choice.chosen, linked);
     if (!pair) return choice;

@@ -3,6 +3,8 @@ import { openHighs } from '../../../server/jobs/highs-solver';
 import { buildShape } from '../../../shared/frames';
 import type { Frame, Strut } from '../../../shared/frames';
 import type { LinearSolver } from '../../../shared/kernel/linear-program';
+import { solveFlats } from '../../../shared/split/pieces/flats-program';
+import { searchFlats } from '../../../shared/split/pieces/flats-search';
 import { areLinked, chooseFlats, planarRings } from '../../../shared/split/pieces';
 
 let solver: LinearSolver;
@@ -182,5 +184,43 @@ describe('chooseFlats', () => {
     };
     const cube = buildShape({ kind: 'cube', edgeMm: 200 });
     expect(chooseFlats(cube, { solver: silent }).strutsInFlats).toBe(8);
+  });
+});
+
+describe('order of what counts', () => {
+  // Three rings of seven struts, and the same 21 struts as one ring of twelve and three of three.
+  const sevens = [0, 1, 2].map((k) => Array.from({ length: 7 }, (_, at) => 7 * k + at));
+  const threes = [0, 1, 2].map((k) => [7 * k, 7 * k + 1, 7 * k + 2]);
+  const twelve = [0, 1, 2].flatMap((k) => [3, 4, 5, 6].map((at) => 7 * k + at));
+  const rings = [...threes, twelve, ...sevens].map((struts, ring) => ({
+    struts,
+    // Joints of its own for each ring: only struts are shared.
+    joints: struts.map((_, at) => 100 * ring + at),
+  }));
+  const squares = rings.map(({ struts }) => struts.length ** 2);
+
+  it('as many struts in three or in four rings > solved > three, although the four have the higher score', () => {
+    expect(solveFlats(rings, squares, [], solver, 5)).toEqual({ chosen: [4, 5, 6], proven: true });
+    expect(searchFlats(rings, squares, () => false, 1e6)).toEqual({ chosen: [4, 5, 6], proven: true });
+  });
+
+  it('as many struts in as many rings > solved > those with the higher score', () => {
+    const pair = [
+      [0, 1, 2, 3],
+      [4, 5, 6, 7],
+      [0, 1, 2],
+      [3, 4, 5, 6, 7],
+    ].map((struts, ring) => ({ struts, joints: struts.map((_, at) => 100 * ring + at) }));
+    const scores = pair.map(({ struts }) => struts.length ** 2);
+    expect(solveFlats(pair, scores, [], solver, 5)!.chosen).toEqual([2, 3]);
+    expect([...searchFlats(pair, scores, () => false, 1e6).chosen].sort()).toEqual([2, 3]);
+  });
+
+  it('two rings apart > solved > not both', () => {
+    const two = [
+      [0, 1, 2],
+      [3, 4, 5, 6],
+    ].map((struts, ring) => ({ struts, joints: struts.map((_, at) => 100 * ring + at) }));
+    expect(solveFlats(two, [0, 0], [[0, 1]], solver, 5)!.chosen).toEqual([1]);
   });
 });

@@ -45,6 +45,25 @@ describe('identicalPieces', () => {
       ]).groups.length;
     expect(groupsOf(plain, stock(3))).toBe(2);
     expect(groupsOf(stock(0), stock(7))).toBe(1);
+    // One thick strut at every joint both times, so that all joints look alike: four parallel ones, or two and two crosswise.
+    const thick = (pairs: [number, number][]) =>
+      cube.struts.map((ends) =>
+        pairs.some((pair) => pair.every((joint) => ends.includes(joint))) ? '8 mm' : '6 mm',
+      );
+    const upright: [number, number][] = [
+      [0, 4],
+      [1, 5],
+      [2, 6],
+      [3, 7],
+    ];
+    const crosswise: [number, number][] = [
+      [0, 1],
+      [2, 3],
+      [4, 7],
+      [5, 6],
+    ];
+    expect(groupsOf(thick(upright), thick(crosswise))).toBe(2);
+    expect(groupsOf(thick(upright), thick(upright))).toBe(1);
   });
 
   it('cubes of 200 and 201 mm > compared at 0.5 mm and at 1 mm > apart, then one group', () => {
