@@ -1,13 +1,13 @@
-export { pieceFrame, pieceFrames } from './piece-frame';
+export { pieceFrames } from './piece-frame';
 export type { PieceFrame } from './piece-frame';
 export { moved } from './rigid-motion';
 export type { Motion, Rotation } from './rigid-motion';
 export type { PieceShape } from './piece-traits';
-export { ALIKE_WITHIN_MM, identicalPieces } from './identical-pieces';
+export { identicalPieces } from './identical-pieces';
 export type { PieceGroup, PieceLikeness } from './identical-pieces';
 export { numberedPieces } from './numbered-pieces';
 export type { NumberedPieces } from './numbered-pieces';
-export { planarRings, RING_LIMITS } from './planar-rings';
+export { planarRings } from './planar-rings';
 export type { Ring } from './ring-plane';
 export { areLinked } from './ring-plane';
 export { chooseFlats } from './flats';
@@ -34,7 +34,7 @@ export type {
   StrutKey,
   TouchedPiece,
 } from './split-changes';
-export { pieceParts, splitFigures } from './split-figures';
+export { splitFigures } from './split-figures';
 export type { PieceFigures, SplitFigures, SplitState, SplitWeights } from './split-figures';
-export { moveStruts, splitProblems } from './move-struts';
+export { moveStruts } from './move-struts';
 export type { MoveOptions, MoveRefusal, PieceLimits, SplitProblem, StrutMove } from './move-struts';

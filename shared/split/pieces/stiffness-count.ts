@@ -8,8 +8,6 @@ const NOTHING = 1e-7;
 export type StiffnessCount = {
   /** Adds a strut between two joints; true when it holds something that nothing held before. */
   add(a: number, b: number): boolean;
-  /** Whether a strut between two joints would hold something; nothing is added. */
-  wouldHold(a: number, b: number): boolean;
   readonly rank: number;
 };
 
@@ -41,7 +39,6 @@ export function stiffnessCount(joints: readonly Vector[]): StiffnessCount {
       if (row) basis.push(row);
       return row !== null;
     },
-    wouldHold: (a, b) => rest(a, b) !== null,
     get rank() {
       return basis.length;
     },

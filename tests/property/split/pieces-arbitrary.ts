@@ -75,9 +75,6 @@ export function movedFrame(random: Random, frame: Frame, mirrored: boolean, wobb
   return { joints, struts, faces: frame.faces.map((face) => face.map((joint) => place.get(joint)!)) };
 }
 
-/** A seeded stream of random numbers, so that a failure can be run again from its seed. */
-export const anyRandom: fc.Arbitrary<Random> = fc.integer({ min: 0, max: 2 ** 31 }).map(seededRandom);
-
 /** A seed and a connected frame of 4 to 30 joints. */
 export const anyPiece = fc
   .record({
