@@ -17,7 +17,7 @@ const AREAS = [
 ];
 const MODULES = [...AREAS, 'mail'];
 const FEATURES =
-  '(accounts|bench|briefings|crib|door|frames|installations|muster|people-plan|planning|progress|projector|safety-desk|stop|travellers)';
+  '(accounts|bench|briefings|crib|door|frames|installations|muster|people-plan|planning|progress|projector|safety-desk|split|stop|travellers)';
 
 const OURS = '^(shared|server|src)/';
 const KNOWN_FOLDERS = [

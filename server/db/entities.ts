@@ -2,7 +2,6 @@ import { Account, OneTimeLink } from '../modules/accounts/account.entity';
 import { Checkout, Tool } from '../modules/crib/crib.entity';
 import { DrawingSettingsRow, Placement } from '../modules/frames/drawing.entity';
 import { Frame } from '../modules/frames/frame.entity';
-import { Anchor, HangingGearRow, PieceHanging } from '../modules/hanging/hanging.entity';
 import { BuildDay, DisplayToken, Installation, Station } from '../modules/installations/installation.entity';
 import { Person } from '../modules/people/person.entity';
 import {
@@ -47,7 +46,4 @@ export const ENTITIES = [
   StopSeen,
   Tool,
   Checkout,
-  Anchor,
-  HangingGearRow,
-  PieceHanging,
 ];

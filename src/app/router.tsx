@@ -62,6 +62,7 @@ export const router = createBrowserRouter([
           page('people', () => import('./routes/people')),
           page('drawing', () => import('./routes/drawing')),
           page('sub-assemblies', () => import('./routes/sub-assemblies')),
+          page('sub-assemblies/:subAssemblyId/sheet', () => import('./routes/piece-sheet')),
           page('templates', () => import('./routes/templates')),
           page('travellers', () => import('./routes/travellers'), { day: true }),
           page('bench', () => import('./routes/bench'), {

@@ -1,3 +1,5 @@
+import { formatLength, parseLength, type LengthUnit } from '../../shared/kernel/lengths';
+
 const DAY_MINUTES = 24 * 60;
 
 /** Minutes since midnight of a local time of day, `HH:MM`. */
@@ -70,4 +72,18 @@ export const counted = (count: number, one: string, many = `${one}s`): string =>
 export function listed(names: readonly string[]): string {
   if (names.length < 2) return names[0] ?? '';
   return `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
+}
+
+/**
+ * A length as it is typed in the installation's unit; reads back to the same length within 0.01 mm.
+ * @param mm below zero for a place before it
+ */
+export function typedLength(mm: number, unit: LengthUnit): string {
+  if (mm < 0) return `-${typedLength(-mm, unit)}`;
+  if (unit === 'mm') return String(Number(mm.toFixed(2)));
+  const shown = formatLength(mm, 'inch');
+  const back = parseLength(shown, 'inch');
+  return back !== null && Math.abs(back - mm) < 0.01
+    ? shown.replace(/ in$/, '')
+    : String(Number((mm / 25.4).toFixed(4)));
 }

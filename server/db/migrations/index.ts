@@ -1,5 +1,5 @@
 import { Start1796126146389 } from './1796126146389-start';
-import { AddDrawingSplitHanging1796138875411 } from './1796138875411-add-drawing-split-hanging';
+import { AddDrawingAndSplit1796142345794 } from './1796142345794-add-drawing-and-split';
 
 /** In the order in which they run. */
-export const MIGRATIONS = [Start1796126146389, AddDrawingSplitHanging1796138875411];
+export const MIGRATIONS = [Start1796126146389, AddDrawingAndSplit1796142345794];

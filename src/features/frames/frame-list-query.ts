@@ -12,7 +12,9 @@ export function useFrameList(installationId: string) {
     queryFn: async () => {
       const frames = await get<FrameView[]>(`/installations/${installationId}/frames`);
       // Patterns of the split are drawn where their pieces are; they are nobody's to place or change.
-      return frames.filter((frame) => frame.source.kind !== 'piece').sort((a, b) => a.name.localeCompare(b.name));
+      return frames
+        .filter((frame) => frame.source.kind !== 'piece')
+        .sort((a, b) => a.name.localeCompare(b.name));
     },
     placeholderData: (before) => before,
   });
@@ -23,3 +25,7 @@ export function useReloadFrames(installationId: string) {
   const client = useQueryClient();
   return () => client.invalidateQueries({ queryKey: framesKey(installationId) });
 }
+
+/** Frames that somebody drew: patterns of the split are drawn with their pieces and are nobody's to place or change. */
+export const drawnFrames = (frames: readonly FrameView[]): FrameView[] =>
+  frames.filter((frame) => frame.source.kind !== 'piece');

@@ -66,9 +66,7 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
       {!editing && (
         <>
           <div className="flex flex-wrap items-center gap-x-6 gap-y-2">
-            <span className="text-pencil">
-              {sourceWords(source)}
-            </span>
+            <span className="text-pencil">{sourceWords(source)}</span>
             {mayEdit && (
               <>
                 <Action look="words" onClick={() => setEditing(true)}>

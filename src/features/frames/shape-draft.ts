@@ -1,8 +1,9 @@
 import { createFrameSchema } from '../../../shared/contracts/frames';
 import type { FieldProblem } from '../../../shared/contracts/errors';
 import { buildShape, shapeSchema, type Frame, type Shape } from '../../../shared/frames';
-import { formatLength, parseLength, type LengthUnit } from '../../../shared/kernel/lengths';
+import { parseLength, type LengthUnit } from '../../../shared/kernel/lengths';
 import { checkInput, typedNumber } from '../../lib/check-input';
+import { typedLength } from '../../lib/formats';
 
 export type ShapeKind = Shape['kind'];
 
@@ -75,16 +76,6 @@ const START_COUNT: Readonly<Record<string, number>> = { sides: 6, divisionsAlong
 
 /** Round inches for a start: half inches, near enough to the millimetres above. */
 const START_INCH = (mm: number): number => (Math.round((mm / 25.4) * 2) / 2) * 25.4;
-
-/** A length as it is typed in the installation's unit; reads back to the same length within 0.01 mm. */
-export function typedLength(mm: number, unit: LengthUnit): string {
-  if (unit === 'mm') return String(Number(mm.toFixed(2)));
-  const shown = formatLength(mm, 'inch');
-  const back = parseLength(shown, 'inch');
-  return back !== null && Math.abs(back - mm) < 0.01
-    ? shown.replace(/ in$/, '')
-    : String(Number((mm / 25.4).toFixed(4)));
-}
 
 /** A draft to begin with, or of a shape that is there. */
 export function draftOf(unit: LengthUnit, name = '', shape?: Shape): ShapeDraft {

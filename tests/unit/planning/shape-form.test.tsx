@@ -3,7 +3,7 @@ import { cleanup, fireEvent, screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { ObjForm } from '../../../src/features/frames/obj-form';
-import { typedLength } from '../../../src/features/frames/shape-draft';
+import { typedLength } from '../../../src/lib/formats';
 import { ShapeForm } from '../../../src/features/frames/shape-form';
 import { errorsShown, fakeServer, show } from './client';
 

@@ -1,6 +1,6 @@
 import type { MigrationInterface, QueryRunner } from 'typeorm';
 
-export class AddDrawingSplitHanging1796138875411 implements MigrationInterface {
+export class AddDrawingAndSplit1796142345794 implements MigrationInterface {
   async up(runner: QueryRunner): Promise<void> {
     await runner.query(
       'CREATE TABLE "placement" ("id" text PRIMARY KEY NOT NULL, "installation_id" text NOT NULL, "frame_id" text NOT NULL, "name" text NOT NULL, "place" text NOT NULL, "position" integer NOT NULL, "revision" integer NOT NULL, "removed_at" integer)',
@@ -10,21 +10,6 @@ export class AddDrawingSplitHanging1796138875411 implements MigrationInterface {
     );
     await runner.query(
       'CREATE TABLE "drawing_settings" ("installation_id" text PRIMARY KEY NOT NULL, "settings" text NOT NULL, "revision" integer NOT NULL)',
-    );
-    await runner.query(
-      'CREATE TABLE "anchor" ("id" text PRIMARY KEY NOT NULL, "installation_id" text NOT NULL, "name" text NOT NULL, "detail" text NOT NULL, "revision" integer NOT NULL, "removed_at" integer)',
-    );
-    await runner.query(
-      'CREATE INDEX "IDX_699e69d41f9885b2f9989d2850" ON "anchor" ("installation_id", "revision") ',
-    );
-    await runner.query(
-      'CREATE TABLE "hanging_gear" ("installation_id" text PRIMARY KEY NOT NULL, "gear" text NOT NULL, "revision" integer NOT NULL)',
-    );
-    await runner.query(
-      'CREATE TABLE "piece_hanging" ("sub_assembly_id" text PRIMARY KEY NOT NULL, "installation_id" text NOT NULL, "detail" text NOT NULL, "sheet" text, "revision" integer NOT NULL)',
-    );
-    await runner.query(
-      'CREATE INDEX "IDX_bd3e806490dd4f058937939fc6" ON "piece_hanging" ("installation_id", "revision") ',
     );
     await runner.query(
       'CREATE TABLE "split" ("id" text PRIMARY KEY NOT NULL, "installation_id" text NOT NULL, "status" text NOT NULL, "drawing_revision" integer NOT NULL, "wish" text NOT NULL, "plan" text NOT NULL, "made_at" integer NOT NULL, "revision" integer NOT NULL)',
@@ -69,11 +54,6 @@ export class AddDrawingSplitHanging1796138875411 implements MigrationInterface {
     );
     await runner.query('DROP INDEX "IDX_19761be2fb544b280c22dfa922"');
     await runner.query('DROP TABLE "split"');
-    await runner.query('DROP INDEX "IDX_bd3e806490dd4f058937939fc6"');
-    await runner.query('DROP TABLE "piece_hanging"');
-    await runner.query('DROP TABLE "hanging_gear"');
-    await runner.query('DROP INDEX "IDX_699e69d41f9885b2f9989d2850"');
-    await runner.query('DROP TABLE "anchor"');
     await runner.query('DROP TABLE "drawing_settings"');
     await runner.query('DROP INDEX "IDX_dae45d2cc7d9b94d5b86a554f8"');
     await runner.query('DROP TABLE "placement"');
