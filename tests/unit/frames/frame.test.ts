@@ -33,7 +33,7 @@ describe('frameFigures', () => {
       joints: 4,
       struts: 4,
       faces: 1,
-      lengthClasses: [{ lengthMm: 100, count: 4, struts: [0, 1, 2, 3] }],
+      lengthClasses: [{ name: 'A', lengthMm: 100, count: 4, struts: [0, 1, 2, 3] }],
       totalStrutMm: 400,
       meanStrutMm: 100,
       longestStrutMm: 100,
