@@ -1,7 +1,15 @@
 import type { DrawingSettings } from '../contracts/drawing';
-import type { SplitMeeting, SplitPiece, SplitPlan, SplitWish, StrutKey } from '../contracts/split';
+import type {
+  SplitGroup,
+  SplitMeeting,
+  SplitPiece,
+  SplitPlan,
+  SplitWish,
+  StrutKey,
+} from '../contracts/split';
 import { joinDrawing, type JoinedDrawing, type PlacedFrame } from '../frames/drawing';
-import { strutLengths, type Frame } from '../frames/frame';
+import { strutLengths, type Frame, type Joint } from '../frames/frame';
+import { cross, dot, size as length, subtract, unit } from '../frames/vector';
 import { densityOf, stickKg } from '../frames/wood';
 import type { LinearSolver } from '../kernel/linear-program';
 import { againstLimits, splitByLimits, SplitRefusal, type SplitLimits } from './limits';
@@ -48,8 +56,9 @@ export interface ReviseSplitInput extends Drawn {
 const SPLIT_MS = 20_000;
 /** Share of the progress that the cut itself takes. */
 const CUT_SHARE = 0.6;
-/** A large piece is not searched for its very best flats for longer than this, s. */
-const FLATS_SECONDS = 2;
+/** A piece is not searched for its very best flats for longer than this, s, and all of them together not longer than that, ms. */
+const FLATS_SECONDS = 1;
+const ALL_FLATS_MS = 8_000;
 /** Beyond this many joints a piece's stiffness is not counted piece by piece: nobody carries such a piece. */
 const MOST_JOINTS_COUNTED = 400;
 
@@ -140,7 +149,7 @@ export function reviseSplit(
     plan.pieces.map((piece) => piece.key),
   );
   const { pieces, renumbered } = withoutEmpty(moved.value.split.pieceOf, keys);
-  const revised = describe(drawing, renumbered, pieces, input, control);
+  const revised = describe(drawing, renumbered, pieces, input, control, plan.groups);
   return {
     plan: {
       ...revised,
@@ -199,7 +208,7 @@ export function planPieces(input: PlanPiecesInput, control: PlanControl): SplitP
   });
   const free = keysFor(bits.length + used.size, [...used]).slice(used.size);
   const keys = known.map((key) => (key === '' ? free.shift()! : key));
-  const planned = describe(drawing, pieceOf, keys, input, control);
+  const planned = describe(drawing, pieceOf, keys, input, control, input.plan.groups);
   return {
     ...planned,
     figures: {
@@ -272,20 +281,27 @@ function describe(
   keys: readonly string[],
   { settings, wish }: Pick<Drawn, 'settings' | 'wish'>,
   control: PlanControl,
+  before: readonly SplitGroup[] = [],
 ): Described {
+  // Pieces that stayed as they were keep their flats and moves.
+  const known = new Map(before.map((group) => [JSON.stringify(group.frame), group]));
   const { frame } = drawing;
   const numbered = numberedPieces(frame, Array.from(pieceOf), { withinMm: settings.cutWithinMm });
   const marks = pieceMarks(numbered.pieces.length, pieceAdjacency(numbered.pieces)).marks;
   const masses = massesOf(frame, settings);
   const limits = limitsOf(wish);
   const mechanisms = new Map<number, number>();
-  const groups = numbered.groups.map((group, at) => {
+  const exactUntil = performance.now() + ALL_FLATS_MS;
+  const groups = numbered.groups.map((group, at): SplitGroup => {
     control.progress(CUT_SHARE + ((1 - CUT_SHARE) * at) / numbered.groups.length, 'flats and moves');
     const first = numbered.pieces[group.first]!.frame;
     mechanisms.set(at, mechanismsOf(first));
-    // Somebody waits for it to stop: the short search will do.
-    const exact = control.shouldStop() ? {} : { solver: control.solver, seconds: FLATS_SECONDS };
-    const flats = chooseFlats(first, exact);
+    const same = known.get(JSON.stringify(first));
+    if (same) return same;
+    // A net that is flat as a whole is glued on the bench as it lies; and where somebody waits, the short search will do.
+    const short =
+      control.shouldStop() || performance.now() > exactUntil || liesFlat(first, settings.cutWithinMm);
+    const flats = chooseFlats(first, short ? {} : { solver: control.solver, seconds: FLATS_SECONDS });
     return {
       frame: first,
       flats,
@@ -339,6 +355,21 @@ function describe(
       baseline: { randomGrowth: null, coordinateBisection: null },
     },
   };
+}
+
+/** Whether all joints of a frame lie in one plane. */
+function liesFlat({ joints }: Frame, withinMm: number): boolean {
+  const [origin] = joints;
+  if (!origin || joints.length < 4) return true;
+  // The farthest from the first, and of the rest the farthest from that line, span the plane best.
+  const from = (joint: Joint) => subtract(joint, origin);
+  const farthest = (size: (joint: Joint) => number) =>
+    joints.reduce((best, joint) => (size(joint) > size(best) ? joint : best), origin);
+  const along = unit(from(farthest((joint) => length(from(joint)))));
+  const aside = cross(along, from(farthest((joint) => length(cross(along, from(joint))))));
+  if (length(aside) <= withinMm) return true;
+  const up = unit(aside);
+  return joints.every((joint) => Math.abs(dot(up, from(joint))) <= withinMm);
 }
 
 /** Ways in which a piece can move as if its joints were pins, rigid motions left out; 0 where it is too large to be asked. */

@@ -24,15 +24,17 @@ export function Component() {
         title="Sub-assemblies"
         summary="What a crew claims, builds and carries, each with its traveller"
       />
-      <ChoiceRow
-        label="what is shown"
-        value={shown}
-        onChange={(show) => setSearch(show === 'split' ? { show } : {})}
-        choices={[
-          { value: 'pieces', label: 'Pieces' },
-          { value: 'split', label: 'Split the drawing' },
-        ]}
-      />
+      <div className="mb-6">
+        <ChoiceRow
+          label="what is shown"
+          value={shown}
+          onChange={(show) => setSearch(show === 'split' ? { show } : {})}
+          choices={[
+            { value: 'pieces', label: 'Pieces' },
+            { value: 'split', label: 'Split the drawing' },
+          ]}
+        />
+      </div>
       {shown === 'split' && installation && may('split.edit') && (
         <SplitDesk installationId={installationId} unit={installation.unit} />
       )}

@@ -95,10 +95,15 @@ export function project(
 }
 
 const EDGE_PX = 28;
+/** A drawing seldom fills the ball that holds it from top to foot. */
+const UPRIGHT_SHARE = 0.85;
 
 /** Pixels of one millimetre. */
-export const scaleOf = (ball: Ball, camera: Camera, width: number, height: number): number =>
-  (camera.zoom * Math.max(20, Math.min(width, height) - 2 * EDGE_PX)) / (2 * ball.radius);
+export const scaleOf = (ball: Ball, camera: Camera, width: number, height: number): number => {
+  const across = Math.max(20, width - 2 * EDGE_PX) / (2 * ball.radius);
+  const up = Math.max(20, height - 2 * EDGE_PX) / (2 * ball.radius * UPRIGHT_SHARE);
+  return camera.zoom * Math.min(across, up);
+};
 
 const radians = (degrees: number): number => (degrees * Math.PI) / 180;
 

@@ -164,7 +164,7 @@ export function SpaceView(props: SpaceViewProps) {
 
   const view = VIEWS.find(({ camera: known }) => known.turn === camera.turn && known.tilt === camera.tilt);
   return (
-    <div className="grid gap-3">
+    <div className="relative grid min-w-0 gap-3">
       <div className="flex flex-wrap items-center justify-between gap-x-8 gap-y-2">
         <ChoiceRow
           label="view"

@@ -100,20 +100,10 @@ export function DrawingDesk({
           {mayEdit && (
             <div className="flex flex-wrap gap-x-4 gap-y-1">
               <Action onClick={() => setOpen({ what: 'new' })}>Place a frame</Action>
-              <Action
-                look="words"
-                disabled={!history.canUndo}
-                onClick={history.undo}
-                reason={history.canUndo ? undefined : 'Nothing to undo yet'}
-              >
+              <Action look="words" disabled={!history.canUndo} onClick={history.undo}>
                 Undo
               </Action>
-              <Action
-                look="words"
-                disabled={!history.canRedo}
-                onClick={history.redo}
-                reason={history.canRedo ? undefined : 'Nothing to do again'}
-              >
+              <Action look="words" disabled={!history.canRedo} onClick={history.redo}>
                 Redo
               </Action>
             </div>

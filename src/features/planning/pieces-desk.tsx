@@ -105,14 +105,14 @@ export function PiecesDesk({
           <Refusal error={templates.error} />
           {templates.isPending ? (
             <Pending />
-          ) : frames.length === 0 ? (
+          ) : frames.every((frame) => frame.source.kind === 'piece') ? (
             <Missing what="frame" to={`/i/${installationId}/drawing`} where="Draw a frame" />
           ) : !templates.data || templates.data.length === 0 ? (
             <Missing what="template" to={`/i/${installationId}/templates`} where="Make a template" />
           ) : (
             <CreatePiecesForm
               installationId={installationId}
-              frames={frames}
+              frames={frames.filter((frame) => frame.source.kind !== 'piece')}
               templates={templates.data}
               codes={codes}
             />

@@ -1,4 +1,5 @@
 import { useMemo, useState } from 'react';
+import { Link } from 'react-router-dom';
 import type { FrameView } from '../../../shared/contracts/frames';
 import type { StepRecord, SubAssemblyRecord } from '../../../shared/contracts/live';
 import { renameSubAssemblySchema } from '../../../shared/contracts/travellers';
@@ -13,7 +14,7 @@ import { Refusal } from '../../components/ui/refusal';
 import { Sheet } from '../../components/ui/sheet';
 import { WireSketch } from '../../components/ui/unrolled-drawing';
 import { checkInput } from '../../lib/check-input';
-import { counted } from '../../lib/formats';
+import { counted, listed } from '../../lib/formats';
 import { useForm } from '../../lib/use-form';
 
 export type PiecesTableProps = {
@@ -31,6 +32,7 @@ export function PiecesTable({ installationId, pieces, stepsOf, frames, closed }:
     () => new Map(frames.map(({ id, geometry }) => [id, wireframeThumbnail(geometry, 44, 32)])),
     [frames],
   );
+  const codes = new Map(pieces.map(({ id, code }) => [id, code]));
   const frameNames = new Map(frames.map(({ id, name }) => [id, name]));
   return (
     <Sheet caption="Sub-assemblies">
@@ -59,7 +61,17 @@ export function PiecesTable({ installationId, pieces, stepsOf, frames, closed }:
           return (
             <tr key={piece.id}>
               <th scope="row">
-                <Figures>{piece.code}</Figures>
+                {piece.kind === 'piece' ? (
+                  <Link
+                    className="words-link"
+                    to={`/i/${installationId}/sub-assemblies/${piece.id}/sheet`}
+                    aria-label={`${piece.code}, its sheet`}
+                  >
+                    <Figures>{piece.code}</Figures>
+                  </Link>
+                ) : (
+                  <Figures>{piece.code}</Figures>
+                )}
               </th>
               <td>
                 <WireSketch path={sketches.get(piece.frameId) ?? ''} width={44} height={32} />
@@ -71,7 +83,11 @@ export function PiecesTable({ installationId, pieces, stepsOf, frames, closed }:
                   piece.name
                 )}
               </td>
-              <td data-label="frame">{frameNames.get(piece.frameId) ?? ''}</td>
+              <td data-label="frame">
+                {piece.kind === 'piece'
+                  ? (frameNames.get(piece.frameId) ?? '')
+                  : `joins ${listed(piece.needs.map((id) => codes.get(id) ?? 'a piece'))}`}
+              </td>
               <td>
                 <span className="pieces-stick">
                   <MarkedStick

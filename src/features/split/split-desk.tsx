@@ -12,7 +12,7 @@ import { EmptyNote, Note } from '../../components/ui/note';
 import { Pending } from '../../components/ui/pending';
 import { Refusal } from '../../components/ui/refusal';
 import { useDrawing, useJoinedDrawing } from '../../lib/drawing';
-import { counted, listed } from '../../lib/formats';
+import { counted } from '../../lib/formats';
 import { useSend } from '../../lib/use-send';
 import { dashOf, PieceMark } from './piece-mark';
 import { isUnderWay, useReloadSplits, useRun, useSplits } from './queries';
@@ -306,7 +306,7 @@ function PieceList({
   onKeep?: (keep: readonly string[]) => void;
 }) {
   return (
-    <div className="overflow-x-auto" role="region" aria-label="The pieces" tabIndex={0}>
+    <div className="relative overflow-x-auto" role="region" aria-label="The pieces" tabIndex={0}>
       <table className="split-pieces">
         <thead>
           <tr>
@@ -324,9 +324,6 @@ function PieceList({
         </thead>
         <tbody>
           {plan.pieces.map((piece) => {
-            const alike = plan.pieces.filter(
-              (other) => other.group === piece.group && other.key !== piece.key,
-            );
             return (
               <tr key={piece.key}>
                 <th scope="row">
@@ -335,15 +332,11 @@ function PieceList({
                 <td>{piece.struts.length}</td>
                 <td>{Math.round(piece.minutes)}</td>
                 <td>{`${piece.massKg.toFixed(1)} kg`}</td>
-                <td>{piece.sizeMm.map((side) => formatLength(side, unit)).join(' × ')}</td>
-                <td>
-                  {alike.length === 0
-                    ? 'the only one'
-                    : `${listed(alike.map((other) => other.mark.letter))}${piece.hand ? `, ${piece.hand} hand` : ''}`}
-                </td>
+                <td>{sizeWords(piece.sizeMm, unit)}</td>
+                <td>{alikeWords(plan, piece)}</td>
                 <td>{piece.mechanisms === 0 ? 'yes' : `moves ${counted(piece.mechanisms, 'way')}`}</td>
                 <td>
-                  <div className="flex flex-wrap gap-x-4">
+                  <div className="flex items-center gap-x-4">
                     <Action
                       look="words"
                       label={`Show piece ${piece.mark.letter} alone`}
@@ -379,6 +372,23 @@ function PieceList({
     </div>
   );
 }
+
+/** Which pieces are made from one drawing: the first of them says how many, the others name it. */
+function alikeWords(plan: SplitPlan, piece: SplitPlan['pieces'][number]): string {
+  const alike = plan.pieces.filter((other) => other.group === piece.group);
+  const [first] = alike;
+  if (!first || alike.length === 1) return 'the only one';
+  const hand = piece.hand ? `, ${piece.hand} hand` : '';
+  return first.key === piece.key
+    ? `${alike.length - 1} more like it${hand}`
+    : `as ${first.mark.letter}${hand}`;
+}
+
+/** Three sides with the unit once. */
+const sizeWords = (sides: readonly number[], unit: LengthUnit): string =>
+  unit === 'mm'
+    ? `${sides.map((side) => formatLength(side, 'mm').replace(' mm', '')).join(' × ')} mm`
+    : sides.map((side) => formatLength(side, unit)).join(' × ');
 
 function indexOf(plan: SplitPlan) {
   const pieceOf: (SplitPlan['pieces'][number] | undefined)[] = [];
