@@ -77,7 +77,7 @@ export async function createApp(config: Config, clock: Clock): Promise<App> {
     sessions,
     reader,
     pool,
-    runs: new Runs(pool, clock),
+    runs: new Runs(pool, clock, log),
     endSessions: async (key, exceptSid) => {
       await sessions.endAllOf(key, exceptSid);
       live.hub?.endAllOf(key);

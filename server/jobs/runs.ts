@@ -1,3 +1,4 @@
+import type { Logger } from 'pino';
 import { newId } from '../../shared/kernel/ids';
 import type { RunView } from '../../shared/contracts/runs';
 import type { Clock } from '../../shared/kernel/clock';
@@ -22,6 +23,7 @@ export class Runs {
   constructor(
     private readonly pool: WorkerPool,
     private readonly clock: Clock,
+    private readonly log: Logger,
   ) {}
 
   /**
@@ -65,7 +67,10 @@ export class Runs {
       (result) => this.end(run, { status: run.status === 'running' ? 'done' : 'stopped', share: 1, result }),
       (error: unknown) => {
         if (run.status === 'stopping') this.end(run, { status: 'stopped' });
-        else this.end(run, { status: 'failed', problem: problemOf(error) });
+        else {
+          if (!(error instanceof AppError)) this.log.error({ err: error, run: key }, 'a computation failed');
+          this.end(run, { status: 'failed', problem: problemOf(error) });
+        }
       },
     );
     return viewOf(run);
@@ -115,6 +120,9 @@ const viewOf = ({ id, status, share, note, result, problem }: Run): RunView => (
 
 function problemOf(error: unknown): RunView['problem'] {
   if (error instanceof AppError) return { code: error.code, message: error.message };
-  const message = error instanceof Error ? error.message : 'It broke off.';
-  return { code: 'RUN_FAILED', message };
+  return {
+    code: 'RUN_FAILED',
+    message:
+      'The computation broke off by a fault of the program. Try it again; if it happens again, tell whoever runs the server.',
+  };
 }

@@ -1,8 +1,10 @@
+import type { SplitPlan } from '../../shared/contracts/split';
 import { openHighs } from './highs-solver';
 import {
   planPieces,
   planSplit,
   reviseSplit,
+  SplitRefusal,
   type PlanPiecesInput,
   type PlanSplitInput,
   type ReviseSplitInput,
@@ -11,8 +13,18 @@ import type { TaskControl } from './tasks';
 
 /** Every computation that runs off the request's thread. */
 export const TASKS = {
-  split: async (input: PlanSplitInput, control: TaskControl) =>
-    planSplit(input, { solver: await openHighs(), ...control }),
+  split: async (
+    input: PlanSplitInput,
+    control: TaskControl,
+  ): Promise<{ plan: SplitPlan; problem: null } | { plan: null; problem: string }> => {
+    try {
+      return { plan: planSplit(input, { solver: await openHighs(), ...control }), problem: null };
+    } catch (error) {
+      // What an error is does not survive the way out of the thread; its words do.
+      if (error instanceof SplitRefusal) return { plan: null, problem: error.message };
+      throw error;
+    }
+  },
   'revise-split': async (input: ReviseSplitInput, control: TaskControl) =>
     reviseSplit(input, { solver: await openHighs(), ...control }),
   'plan-pieces': async (input: PlanPiecesInput, control: TaskControl) =>

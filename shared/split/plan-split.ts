@@ -12,7 +12,7 @@ import { strutLengths, type Frame, type Joint } from '../frames/frame';
 import { cross, dot, size as length, subtract, unit } from '../frames/vector';
 import { densityOf, stickKg } from '../frames/wood';
 import type { LinearSolver } from '../kernel/linear-program';
-import { againstLimits, splitByLimits, SplitRefusal, type SplitLimits } from './limits';
+import { againstLimits, splitByLimits, type SplitLimits } from './limits';
 import { bitsOf, fieldJointsOf, netOf } from './partition';
 import {
   assemblyMoves,
@@ -408,5 +408,3 @@ function meetingsOf({ pieces }: NumberedPieces, keys: readonly string[], frame: 
   }
   return [...pairs.values()];
 }
-
-export { SplitRefusal };

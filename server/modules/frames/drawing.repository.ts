@@ -83,9 +83,9 @@ export async function loadPlacement(
 export async function strutsPlaced(
   manager: EntityManager,
   installationId: string,
-): Promise<{ id: string; place: string; struts: number }[]> {
+): Promise<{ id: string; frameId: string; place: string; struts: number }[]> {
   return manager.query(
-    `SELECT placement.id, placement.place, json_array_length(frame.geometry, '$.struts') AS struts
+    `SELECT placement.id, placement.frame_id AS frameId, placement.place, json_array_length(frame.geometry, '$.struts') AS struts
      FROM placement JOIN frame ON frame.id = placement.frame_id
      WHERE placement.installation_id = ? AND placement.removed_at IS NULL`,
     [installationId],

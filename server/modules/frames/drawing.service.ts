@@ -20,6 +20,8 @@ const stale = (name: string, revision: number) =>
     { details: { revision } },
   );
 
+const copiesIn = (row: { place: string }) => copiesOf((JSON.parse(row.place) as PlacementInput).pattern);
+
 /** The whole drawing must stay within what the screens and the split take. */
 async function guardSize(
   scope: WriteScope,
@@ -29,16 +31,40 @@ async function guardSize(
   exceptId: string | null,
 ): Promise<void> {
   const others = (await strutsPlaced(scope.manager, installationId)).filter((row) => row.id !== exceptId);
-  const known = others.reduce(
-    (sum, row) => sum + row.struts * copiesOf((JSON.parse(row.place) as PlacementInput).pattern),
-    0,
-  );
+  const known = others.reduce((sum, row) => sum + row.struts * copiesIn(row), 0);
   const wanted = strutsOfFrame * copiesOf(pattern);
   if (known + wanted <= MOST_STRUTS) return;
   throw fieldError(
     'pattern',
     'too-many',
     `These copies are ${wanted.toLocaleString('en')} struts and the drawing has ${known.toLocaleString('en')} already; it takes ${MOST_STRUTS.toLocaleString('en')} in all. Set out fewer copies.`,
+  );
+}
+
+/**
+ * A frame that grows grows everywhere it stands; the drawing must stay within its limit.
+ * @param struts how many the frame is to have
+ * @throws AppError VALIDATION with the numbers
+ */
+export async function guardFrameSize(
+  scope: WriteScope,
+  installationId: string,
+  frameId: string,
+  struts: number,
+): Promise<void> {
+  const rows = await strutsPlaced(scope.manager, installationId);
+  const own = rows.filter((row) => row.frameId === frameId);
+  if (own.every((row) => struts <= row.struts)) return;
+  const copies = own.reduce((sum, row) => sum + copiesIn(row), 0);
+  const all = rows.reduce(
+    (sum, row) => sum + (row.frameId === frameId ? struts : row.struts) * copiesIn(row),
+    0,
+  );
+  if (all <= MOST_STRUTS) return;
+  throw fieldError(
+    'geometry',
+    'too-many',
+    `This frame stands ${copies} ${copies === 1 ? 'time' : 'times'} in the drawing; with ${struts.toLocaleString('en')} struts each the drawing would have ${all.toLocaleString('en')}, and it takes ${MOST_STRUTS.toLocaleString('en')} in all. Set out fewer copies first.`,
   );
 }
 

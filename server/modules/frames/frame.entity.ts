@@ -9,7 +9,7 @@ export class Frame {
   @PrimaryColumn({ type: 'text' }) id!: string;
   @Column({ type: 'text', name: 'installation_id' }) installationId!: string;
   @Column({ type: 'text' }) name!: string;
-  /** Where the geometry came from: a shape with its measures, or a file. */
+  /** Where the geometry came from: a shape with its measures, a file, a table or a split. */
   @Column({ type: 'simple-json' }) source!: FrameSource;
   /** Joints in mm, struts and faces by joint index. */
   @Column({ type: 'simple-json' }) geometry!: FrameGeometry;

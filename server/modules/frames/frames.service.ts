@@ -3,7 +3,9 @@ import {
   buildShape,
   cutCount,
   jointCount,
+  parseFrameCsv,
   parseObj,
+  validateFrame,
   type Frame as Geometry,
   type ObjNote,
 } from '../../../shared/frames';
@@ -12,6 +14,7 @@ import type { WriteScope } from '../../db/write';
 import { AppError, notFound } from '../../http/app-error';
 import { assertOpen } from '../installations';
 import { placementsOfFrame } from './drawing.repository';
+import { guardFrameSize } from './drawing.service';
 import { Frame } from './frame.entity';
 import { loadFrame, touchPieces, usesOfFrame } from './frames.repository';
 
@@ -21,32 +24,60 @@ interface Built {
   notes: ObjNote[];
 }
 
-/** Geometry from what was typed or read; every fault of a file is named with its line. */
+/** As many problems as a person can mend before they try again. */
+const MOST_PROBLEMS = 50;
+
+/** Geometry from what was typed or read; every fault of a file is named with its line, of a table with its row. */
 function build(input: CreateFrame): Built {
-  if (input.kind === 'shape') {
-    return { source: { kind: 'shape', shape: input.shape }, geometry: buildShape(input.shape), notes: [] };
+  switch (input.kind) {
+    case 'shape':
+      return { source: { kind: 'shape', shape: input.shape }, geometry: buildShape(input.shape), notes: [] };
+    case 'obj':
+      return readFile('OBJ_INVALID', input, parseObj(input.text));
+    case 'csv':
+      return readFile('CSV_INVALID', input, parseFrameCsv(input.text));
+    case 'table':
+      guardTable(input.geometry);
+      return { source: { kind: 'table' }, geometry: input.geometry, notes: [] };
   }
-  const read = parseObj(input.text);
-  if (!read.ok) {
-    const count = read.refusal.length;
-    throw new AppError(
-      'OBJ_INVALID',
-      `${input.fileName} was not read: ${count === 1 ? 'one line is' : `${count} lines are`} wrong.`,
-      {
-        fields: read.refusal.map(({ code, message }) => ({ path: 'text', code, message })),
-      },
-    );
-  }
-  return {
-    source: { kind: 'obj', fileName: input.fileName },
-    geometry: read.value.frame,
-    notes: read.value.notes,
-  };
+}
+
+function readFile(
+  code: 'OBJ_INVALID' | 'CSV_INVALID',
+  { kind, fileName }: Extract<CreateFrame, { fileName: string }>,
+  read: ReturnType<typeof parseObj> | ReturnType<typeof parseFrameCsv>,
+): Built {
+  if (read.ok) return { source: { kind, fileName }, geometry: read.value.frame, notes: read.value.notes };
+  const count = read.refusal.length;
+  throw new AppError(
+    code,
+    `${fileName} was not read: ${count === 1 ? 'one line is' : `${count} lines are`} wrong.`,
+    {
+      fields: read.refusal.map((problem) => ({ path: 'text', code: problem.code, message: problem.message })),
+    },
+  );
+}
+
+function guardTable(geometry: Geometry): void {
+  const problems = validateFrame(geometry);
+  if (problems.length === 0) return;
+  const row = (at: number) => `.${at - 1}`;
+  throw new AppError(
+    'FRAME_INVALID',
+    `The frame was not kept: ${problems.length === 1 ? 'one thing is' : `${problems.length} things are`} wrong with its joints and struts.`,
+    {
+      fields: problems.slice(0, MOST_PROBLEMS).map(({ code, message, joint, strut, face }) => ({
+        path: `geometry${joint ? `.joints${row(joint)}` : strut ? `.struts${row(strut)}` : face ? `.faces${row(face)}` : ''}`,
+        code,
+        message,
+      })),
+    },
+  );
 }
 
 /**
- * Add a frame from a shape's measures or a Wavefront OBJ file.
- * @throws AppError OBJ_INVALID with every fault of the file by line
+ * Add a frame from a shape's measures, a Wavefront OBJ file, a CSV of joints and struts, or a table of them.
+ * @throws AppError OBJ_INVALID, CSV_INVALID with every fault of the file by line, FRAME_INVALID with those of a table by row
  */
 export async function createFrame(
   scope: WriteScope,
@@ -82,7 +113,8 @@ export interface EditedFrame {
 /**
  * Change a frame's name, measures or file. Where its geometry changes, the travellers of its pieces get their next
  * revision, since a printed one shows another drawing; their planned minutes stay as they were planned.
- * @throws AppError IN_USE when its geometry would change under pieces on which work has begun
+ * @throws AppError STALE_PAGE when somebody changed it since the page was loaded, IN_USE when its geometry would change under pieces on
+ *   which work has begun, VALIDATION when its copies in the drawing would be too many struts, and as `createFrame`
  */
 export async function editFrame(
   scope: WriteScope,
@@ -93,6 +125,13 @@ export async function editFrame(
   await assertOpen(scope, installationId);
   const known = await loadFrame(scope.manager, installationId, id);
   if (!known) throw notFound();
+  if (input.revision !== undefined && input.revision !== known.revision) {
+    throw new AppError(
+      'STALE_PAGE',
+      `Somebody changed the frame ${known.name} meanwhile. Load it again; yours was not saved.`,
+      { details: { revision: known.revision } },
+    );
+  }
   const { source, geometry, notes } = build(input);
   const changed = JSON.stringify(geometry) !== JSON.stringify(known.geometry);
   const { begun } = changed ? await usesOfFrame(scope.manager, id) : { begun: 0 };
@@ -103,6 +142,7 @@ export async function editFrame(
       { details: { begun } },
     );
   }
+  await guardFrameSize(scope, installationId, id, geometry.struts.length);
   const revision = await scope.revision();
   await scope.manager.update(Frame, { id }, { name: input.name, source, geometry, revision });
   // Pieces are drawn from their frame: their screens fetch it again.

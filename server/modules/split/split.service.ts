@@ -55,11 +55,12 @@ export function startSplit(deps: Deps, maker: ChangeMaker, installationId: strin
     wish,
     kept: [...begunPieces(deps.data.readHandle, installationId), ...keptOf(proposed, wish.keep)],
   };
-  return deps.runs.start(installationId, 'split', 'split', input, (plan) =>
-    deps.writer.runPlain({ maker, installationId }, (scope) =>
+  return deps.runs.start(installationId, 'split', 'split', input, async ({ plan, problem }) => {
+    if (plan === null) throw new AppError('SPLIT_IMPOSSIBLE', problem);
+    return deps.writer.runPlain({ maker, installationId }, (scope) =>
       saveProposal(scope, installationId, wish, plan, view.revision),
-    ),
-  );
+    );
+  });
 }
 
 /** Pieces of the proposal that shall stay, by the struts they are made of. */
