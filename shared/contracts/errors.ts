@@ -36,6 +36,7 @@ export const ERROR_STATUS = {
   // frames
   FRAME_INVALID: 422,
   OBJ_INVALID: 422,
+  CSV_INVALID: 422,
   CODE_TAKEN: 409,
   // the split
   RUN_ACTIVE: 409,

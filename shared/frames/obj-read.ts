@@ -1,5 +1,5 @@
-import { problemList } from './obj-problems';
-import type { ProblemList } from './obj-problems';
+import { problemList, readFileNumber, shownWord } from './file-problems';
+import type { ObjProblemCode, ObjProblemList } from './obj-problems';
 import { objKeyword, objStatements } from './obj-statements';
 import type { ObjStatement, ObjWord } from './obj-statements';
 import { FRAME_LIMITS } from './validate-frame';
@@ -14,30 +14,25 @@ export type ReadElement = { kind: 'line' | 'face'; line: number; joints: number[
 export type ReadObj = {
   joints: ReadJoint[];
   elements: ReadElement[];
-  problems: ProblemList[];
+  problems: ObjProblemList[];
   curvedLines: number[];
   lastLine: number;
 };
 
-const NUMBER = /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i;
-const NOT_FINITE = /^[+-]?(nan|inf|infinity|1\.#)/i;
 const REFERENCE = /^([+-]?\d+)(\/[+-]?\d*){0,2}$/;
 
-const shown = (text: string): string => JSON.stringify(text.length > 24 ? `${text.slice(0, 24)}…` : text);
-
-function readNumber({ text, line }: ObjWord, problems: ProblemList): number | null {
-  const value = NUMBER.test(text) ? Number(text) : Number.NaN;
-  if (Number.isFinite(value)) return value;
-  const what = NOT_FINITE.test(text) || NUMBER.test(text) ? 'is no finite number' : 'is not a number';
+function readNumber({ text, line }: ObjWord, problems: ObjProblemList): number | null {
+  const read = readFileNumber(text);
+  if ('value' in read) return read.value;
   problems.add(
     'OBJ_NOT_A_NUMBER',
     line,
-    () => `${shown(text)} ${what}, so the joint has no place. Export the file again or correct it.`,
+    () => `${shownWord(text)} ${read.wrong}, so the joint has no place. Export the file again or correct it.`,
   );
   return null;
 }
 
-function readJoint(statement: ObjStatement, mmPerUnit: number, problems: ProblemList): ReadJoint {
+function readJoint(statement: ObjStatement, mmPerUnit: number, problems: ObjProblemList): ReadJoint {
   const { line, words, openEnd } = statement;
   const numbers = words.map((word) => readNumber(word, problems));
   if (words.length < 3 || openEnd) {
@@ -73,7 +68,7 @@ function readElement(
   { line, words, openEnd }: ObjStatement,
   kind: 'line' | 'face',
   jointsSoFar: number,
-  problems: ProblemList,
+  problems: ObjProblemList,
 ): RawElement | null {
   const least = kind === 'line' ? 2 : 3;
   if (words.length < least || openEnd) {
@@ -93,7 +88,7 @@ function readElement(
         'OBJ_BAD_INDEX',
         word.line,
         () =>
-          `${shown(word.text)} is no joint number. Joints count from 1, or from -1 backwards, such as 4, 4/2, 4//7 or -1.`,
+          `${shownWord(word.text)} is no joint number. Joints count from 1, or from -1 backwards, such as 4, 4/2, 4//7 or -1.`,
       );
     // Negative numbers count back from the joints read so far: -1 is the last one.
     else
@@ -112,8 +107,8 @@ function readElement(
  * @param mmPerUnit millimetres per unit of the file
  */
 export function readObj(text: string, mmPerUnit: number): ReadObj {
-  const problems = problemList();
-  const missing = problemList();
+  const problems = problemList<ObjProblemCode>();
+  const missing = problemList<ObjProblemCode>();
   const joints: ReadJoint[] = [];
   const raw: RawElement[] = [];
   const curvedLines: number[] = [];
@@ -131,7 +126,7 @@ export function readObj(text: string, mmPerUnit: number): ReadObj {
         'OBJ_UNKNOWN_LINE',
         statement.line,
         () =>
-          `${shown(statement.keyword)} begins no line of an OBJ file (v, l, f). Check that this is a Wavefront OBJ.`,
+          `${shownWord(statement.keyword)} begins no line of an OBJ file (v, l, f). Check that this is a Wavefront OBJ.`,
       );
   }
   // Looked up at the end, since a line may name a joint that comes after it.
@@ -143,7 +138,7 @@ export function readObj(text: string, mmPerUnit: number): ReadObj {
         'OBJ_MISSING_JOINT',
         ref.line,
         () =>
-          `${shown(ref.asked)} names a joint that is not there; the file has ${joints.length}. It seems cut off or put together wrongly.`,
+          `${shownWord(ref.asked)} names a joint that is not there; the file has ${joints.length}. It seems cut off or put together wrongly.`,
       );
     if (lost.length === 0) elements.push({ kind, line, joints: refs.map(({ index }) => index) });
   }

@@ -1,11 +1,11 @@
 import { ok, refuse } from '../kernel/result';
 import type { Result } from '../kernel/result';
 import { edgeKey, ringEdges } from './edge-key';
+import { mergeProblems, problemList } from './file-problems';
 import { SAME_WITHIN_MM, strutLengths } from './frame';
 import type { Frame, Strut } from './frame';
 import { firstAtPlace } from './near-points';
-import { mergeProblems, problemList } from './obj-problems';
-import type { ObjProblem, ProblemList } from './obj-problems';
+import type { ObjProblem, ObjProblemCode, ObjProblemList } from './obj-problems';
 import { readObj } from './obj-read';
 import type { ReadObj } from './obj-read';
 import { FRAME_LIMITS } from './validate-frame';
@@ -21,14 +21,14 @@ export type ObjNote = { message: string; line?: number };
 /** What an OBJ file gives. */
 export type ObjReading = { frame: Frame; notes: ObjNote[] };
 
-type Edges = { struts: Strut[]; faces: number[][]; problems: ProblemList; notes: ObjNote[] };
+type Edges = { struts: Strut[]; faces: number[][]; problems: ObjProblemList; notes: ObjNote[] };
 
 const noteMany = (lines: readonly number[], one: string, many: (count: number) => string): ObjNote[] =>
   lines.length === 0 ? [] : [{ line: lines[0]!, message: lines.length === 1 ? one : many(lines.length) }];
 
 /** Struts and faces in the order of the file, with what is wrong with each. `place` maps a joint to the first at its place. */
 function collectEdges({ joints, elements }: ReadObj, place: readonly number[]): Edges {
-  const problems = problemList();
+  const problems = problemList<ObjProblemCode>();
   const struts: Strut[] = [];
   const faces: number[][] = [];
   const seen = new Map<number, { lineOfL: number | null }>();
@@ -62,7 +62,7 @@ function collectEdges({ joints, elements }: ReadObj, place: readonly number[]): 
           'OBJ_TOO_LARGE',
           line,
           () =>
-            `here the file passes ${FRAME_LIMITS.struts} struts, the most one frame can have. Split the drawing.`,
+            `here the file passes ${FRAME_LIMITS.struts.toLocaleString('en')} struts, the most one frame can have. Split the drawing.`,
         );
     } else if (ofLine && known.lineOfL !== null) {
       const other = known.lineOfL;
@@ -189,7 +189,7 @@ export function parseObj(
     SAME_WITHIN_MM,
   );
   const edges = collectEdges(read, place);
-  const whole = problemList();
+  const whole = problemList<ObjProblemCode>();
   const held = [...new Set(edges.struts.flat())].sort((a, b) => a - b);
   const excess = held[FRAME_LIMITS.joints];
   if (excess !== undefined)
@@ -197,7 +197,7 @@ export function parseObj(
       'OBJ_TOO_LARGE',
       read.joints[excess]!.line,
       () =>
-        `here the file passes ${FRAME_LIMITS.joints} joints, the most one frame can have; it has ${held.length}. Split the drawing.`,
+        `here the file passes ${FRAME_LIMITS.joints.toLocaleString('en')} joints, the most one frame can have; it has ${held.length}. Split the drawing.`,
     );
   if (edges.struts.length === 0 && [...read.problems, edges.problems].every(({ count }) => count === 0))
     whole.add(
@@ -206,7 +206,7 @@ export function parseObj(
       () =>
         'the file ends without any line (l) or face (f), so there is nothing to cut. Export edges or faces too.',
     );
-  const problems = mergeProblems([...read.problems, edges.problems, whole]);
+  const problems = mergeProblems([...read.problems, edges.problems, whole], 'OBJ_MORE_PROBLEMS');
   return problems.length > 0 ? refuse(problems) : ok(renumber(read, edges, place));
 }
 

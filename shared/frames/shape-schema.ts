@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { FRAME_LIMITS } from './validate-frame';
 
 /** What a measure of a shape may be: mm, and the least strut that can still be held, cut and glued. */
 export const SHAPE_LIMITS = {
@@ -9,6 +8,8 @@ export const SHAPE_LIMITS = {
   leastSides: 3,
   mostSides: 120,
   mostDivisions: 60,
+  /** A shape is drawn anew with every measure that is typed; larger structures are set out of several. */
+  mostStruts: 5000,
 } as const;
 
 const typed = (input: unknown): string => (typeof input === 'number' ? `you gave ${input}` : 'it is missing');
@@ -143,10 +144,10 @@ function checkVaultBay(bay: VaultBay, refuse: (path: string, message: string) =>
       `Staggered rows need an even number of divisions across; you gave ${bay.divisionsAcross}. Take ${bay.divisionsAcross + 1}.`,
     );
   const struts = vaultStruts(bay);
-  if (struts > FRAME_LIMITS.struts)
+  if (struts > SHAPE_LIMITS.mostStruts)
     refuse(
       'divisionsAcross',
-      `The bay would have ${Math.round(struts)} struts; at most ${FRAME_LIMITS.struts} can be one frame. Take fewer divisions or several bays.`,
+      `The bay would have ${Math.round(struts)} struts; at most ${SHAPE_LIMITS.mostStruts.toLocaleString('en')} can be one frame. Take fewer divisions or several bays.`,
     );
   const shortest = Math.min(bay.lengthMm / bay.divisionsAlong, bay.widthMm / bay.divisionsAcross);
   if (shortest < SHAPE_LIMITS.leastStrutMm)

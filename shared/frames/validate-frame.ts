@@ -4,8 +4,8 @@ import type { Frame, Joint } from './frame';
 import { firstAtPlace } from './near-points';
 import { distance } from './vector';
 
-/** The largest frame that is taken: one piece of work people can still number and draw. */
-export const FRAME_LIMITS = { joints: 5000, struts: 5000, coordinateMm: 1_000_000 } as const;
+/** The largest frame that is taken: as much as a whole drawing, since one may come as a single connected structure. */
+export const FRAME_LIMITS = { joints: 20_000, struts: 20_000, coordinateMm: 1_000_000 } as const;
 
 export type FrameProblemCode =
   | 'FRAME_TOO_LARGE'
@@ -140,7 +140,7 @@ function looseJoints({ joints, struts }: Frame): FrameProblem[] {
  * Everything that is wrong with a frame, at once.
  * @param frame joints in mm, struts and faces as joint indexes from 0; any numbers at all
  * @returns an empty list for a frame that can be built; otherwise limits first, then joints, struts, faces, loose joints.
- *   Limits: 5,000 joints, 5,000 struts, 1 km from the origin; places and lengths below 0.1 mm are the same or none.
+ *   Limits: 20,000 joints, 20,000 struts, 1 km from the origin; places and lengths below 0.1 mm are the same or none.
  */
 export function validateFrame(frame: Frame): FrameProblem[] {
   const problems: FrameProblem[] = [];
@@ -149,7 +149,7 @@ export function validateFrame(frame: Frame): FrameProblem[] {
     if (count > FRAME_LIMITS[part])
       problems.push({
         code: 'FRAME_TOO_LARGE',
-        message: `The frame has ${count} ${part}; at most ${FRAME_LIMITS[part]} can be one frame. Split it into several frames.`,
+        message: `The frame has ${count} ${part}; at most ${FRAME_LIMITS[part].toLocaleString('en')} can be one frame. Split it into several frames.`,
       });
   }
   if (frame.struts.length === 0)

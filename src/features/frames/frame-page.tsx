@@ -102,7 +102,10 @@ function sourceWords(source: FrameView['source']): string {
     case 'shape':
       return source.shape.kind.replace('-', ' ');
     case 'obj':
+    case 'csv':
       return `From the file ${source.fileName}`;
+    case 'table':
+      return 'Typed joint by joint';
     case 'piece':
       return 'A pattern of the split';
   }

@@ -239,12 +239,12 @@ describe('parseObj of a bad file', () => {
     expect(problems('é'.repeat(OBJ_MOST_BYTES / 2 + 1))[0]!.code).toBe('OBJ_TOO_LARGE');
   });
 
-  it('5,001 struts and 5,002 joints > read > refused at the lines that pass the limits', () => {
-    const joints = Array.from({ length: 5002 }, (_, at) => `v ${at} 0 0`).join('\n');
-    const struts = Array.from({ length: 5001 }, (_, at) => `l ${at + 1} ${at + 2}`).join('\n');
+  it('20,001 struts and 20,002 joints > read > refused at the lines that pass the limits', () => {
+    const joints = Array.from({ length: 20_002 }, (_, at) => `v ${at} 0 0`).join('\n');
+    const struts = Array.from({ length: 20_001 }, (_, at) => `l ${at + 1} ${at + 2}`).join('\n');
     expect(problems(`${joints}\n${struts}`).map(({ code, line }) => [code, line])).toEqual([
-      ['OBJ_TOO_LARGE', 5001],
-      ['OBJ_TOO_LARGE', 5002 + 5001],
+      ['OBJ_TOO_LARGE', 20_001],
+      ['OBJ_TOO_LARGE', 20_002 + 20_001],
     ]);
   });
 });
