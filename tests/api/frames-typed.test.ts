@@ -94,13 +94,18 @@ describe('createFrame', () => {
         faces: [[0, 1, 2]],
       }),
     );
-    expect(reply).toMatchObject({ status: 422, error: { code: 'FRAME_INVALID' } });
-    expect(reply.error?.fields?.map((field) => [field.path, field.code])).toEqual([
-      ['geometry.struts.1', 'FRAME_DOUBLED_STRUT'],
-      ['geometry.faces.0', 'FRAME_BAD_FACE'],
-      ['geometry.faces.0', 'FRAME_BAD_FACE'],
-      ['geometry.joints.2', 'FRAME_LOOSE_JOINT'],
-    ]);
+    expect(reply).toMatchObject({
+      status: 422,
+      error: {
+        code: 'FRAME_INVALID',
+        fields: [
+          { path: 'geometry.struts.1', code: 'FRAME_DOUBLED_STRUT' },
+          { path: 'geometry.faces.0', code: 'FRAME_BAD_FACE' },
+          { path: 'geometry.faces.0', code: 'FRAME_BAD_FACE' },
+          { path: 'geometry.joints.2', code: 'FRAME_LOOSE_JOINT' },
+        ],
+      },
+    });
     expect(await list()).toEqual([]);
   });
 
