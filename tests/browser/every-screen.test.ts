@@ -52,6 +52,8 @@ const SCREENS: { who: string; path: string; heading: string; ready: string }[] =
   { who: 'ines', path: 'plan', heading: 'Plan', ready: 'Build days' },
   { who: 'ines', path: 'people', heading: 'People', ready: 'Wren S' },
   { who: 'ines', path: 'drawing', heading: 'Drawing', ready: '13 joints, 28 struts' },
+  { who: 'ines', path: 'drawing?show=placed', heading: 'Drawing', ready: 'Wood and tolerances' },
+  { who: 'ines', path: 'sub-assemblies?show=split', heading: 'Sub-assemblies', ready: 'What a piece may be' },
   { who: 'ines', path: 'templates', heading: 'Templates', ready: 'glue out' },
   { who: 'ines', path: 'sub-assemblies', heading: 'Sub-assemblies', ready: 'V-14' },
   { who: 'ines', path: 'day-log', heading: 'Day log', ready: 'Goran M' },

@@ -1,7 +1,7 @@
 import type { TemplateStep } from '../../../shared/contracts/travellers';
 import { defaultTemplateSteps } from '../../../shared/travellers/default-template';
 import type { DemoClient } from './demo-client';
-import { BUILD_DAY, FRAMES, INSTALLATION, PIECES, STATIONS } from './demo-scenario';
+import { BUILD_DAY, FRAMES, PLACEMENTS, INSTALLATION, PIECES, STATIONS } from './demo-scenario';
 
 interface Made {
   id: string;
@@ -26,6 +26,9 @@ export async function planHall(organiser: DemoClient): Promise<string> {
   const frames = new Map<string, string>();
   for (const { name, shape } of FRAMES) {
     frames.set(name, (await organiser.post<Made>(path('/frames'), { kind: 'shape', name, shape })).id);
+  }
+  for (const { frame, ...placement } of PLACEMENTS) {
+    await organiser.post(path('/placements'), { ...placement, frameId: frames.get(frame) ?? '' });
   }
   const steps: TemplateStep[] = defaultTemplateSteps(stations);
   const template = await organiser.post<Made>(path('/templates'), { name: 'Lattice and lanterns', steps });

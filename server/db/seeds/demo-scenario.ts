@@ -1,6 +1,7 @@
 import type { Duty, SiteRole } from '../../../shared/accounts';
 import type { AgeBand } from '../../../shared/safety';
 import type { ToolInput } from '../../../shared/contracts/crib';
+import type { PlacementInput } from '../../../shared/contracts/drawing';
 import type { Shape } from '../../../shared/frames';
 
 /**
@@ -61,6 +62,26 @@ export const FRAMES: { name: string; shape: Shape }[] = [
   { name: 'Four-side lantern', shape: lantern(4, 150) },
   { name: 'Five-side lantern', shape: lantern(5, 160) },
   { name: 'Six-side lantern', shape: lantern(6, 170) },
+];
+
+const UPRIGHT = { x: 0, y: 0, z: 0 };
+
+/** Where the frames stand: bay beside bay, each sharing its end arch with the next, and three rows of lanterns beneath. */
+export const PLACEMENTS: ({ frame: string } & Omit<PlacementInput, 'frameId' | 'revision'>)[] = [
+  {
+    frame: 'Lattice bay',
+    name: 'Canopy',
+    at: { x: 0, y: 0, z: 2600 },
+    turn: UPRIGHT,
+    pattern: { kind: 'row', count: 14, step: { x: 1000, y: 0, z: 0 } },
+  },
+  ...['Four-side lantern', 'Five-side lantern', 'Six-side lantern'].map((frame, row) => ({
+    frame,
+    name: `${frame}s`,
+    at: { x: 800, y: -700 + 700 * row, z: 1700 + 150 * row },
+    turn: UPRIGHT,
+    pattern: { kind: 'row' as const, count: 8, step: { x: 1700, y: 0, z: 0 } },
+  })),
 ];
 
 function lantern(sides: number, radius: number): Shape {

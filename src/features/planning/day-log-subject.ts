@@ -75,6 +75,13 @@ const SAY: Readonly<Record<string, Say>> = {
     return day ? formatCalendarDay(day.date) : null;
   },
   frameId: (id, { frames }) => frames.get(text(id))?.name ?? null,
+  copies: (copies) => (typeof copies === 'number' && copies > 1 ? `${copies} times` : null),
+  pieces: (pieces) => (typeof pieces === 'number' ? counted(pieces, 'piece') : null),
+  added: (added) => (typeof added === 'number' ? `${counted(added, 'piece')} made` : null),
+  redrawn: (redrawn) =>
+    typeof redrawn === 'number' && redrawn > 0 ? `${counted(redrawn, 'piece')} redrawn` : null,
+  fieldJoints: (joints) => (typeof joints === 'number' ? counted(joints, 'field joint') : null),
+  struts: (struts) => (typeof struts === 'number' ? counted(struts, 'strut') : null),
   briefingId: (id, { records }) => records.briefings.get(text(id))?.title ?? null,
   version: (version) => (typeof version === 'number' ? `version ${version}` : null),
   scope: (scope) => (scope === 'area' ? null : text(scope).replace('-', ' ')),
