@@ -33,3 +33,7 @@ export type { CutLength, CutLengths, CutWarning, CutWarningCode } from './cut-le
 export { separateShapes } from './separate-shapes';
 export { CSV_MOST_BYTES, formatFrameCsv, parseFrameCsv } from './frame-csv';
 export type { CsvNote, CsvProblem, CsvProblemCode, CsvReading } from './frame-csv';
+export { fieldApplies, SHAPE_FORMS } from './shape-forms';
+export type { ShapeField, ShapeForm } from './shape-forms';
+export { ARCHIMEDEAN_SOLIDS } from './shapes/archimedean-points';
+export type { ArchimedeanSolid } from './shapes/archimedean-points';

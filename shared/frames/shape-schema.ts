@@ -1,35 +1,18 @@
 import { z } from 'zod';
-
-/** What a measure of a shape may be: mm, and the least strut that can still be held, cut and glued. */
-export const SHAPE_LIMITS = {
-  leastMm: 10,
-  mostMm: 20_000,
-  leastStrutMm: 5,
-  leastSides: 3,
-  mostSides: 120,
-  mostDivisions: 60,
-  /** A shape is drawn anew with every measure that is typed; larger structures are set out of several. */
-  mostStruts: 5000,
-} as const;
-
-const typed = (input: unknown): string => (typeof input === 'number' ? `you gave ${input}` : 'it is missing');
-
-/** A number within limits whose every refusal names the field, the limits and what was given. */
-function measure(name: string, least: number, most: number, unit: string) {
-  const range = `${name} must be from ${least} to ${most}${unit}`;
-  return z
-    .number({ error: (issue) => `${range}; ${typed(issue.input)}. Type a number.` })
-    .min(least, { error: (issue) => `${range}; ${typed(issue.input)}.` })
-    .max(most, { error: (issue) => `${range}; ${typed(issue.input)}.` });
-}
-
-const lengthMm = (name: string, least: number = SHAPE_LIMITS.leastMm) =>
-  measure(name, least, SHAPE_LIMITS.mostMm, ' mm');
-
-const whole = (name: string, least: number, most: number) =>
-  measure(name, least, most, '').refine(Number.isInteger, {
-    error: (issue) => `${name} must be a whole number; ${typed(issue.input)}.`,
-  });
+import { archimedeanSchema } from './shapes/archimedean';
+import { checkCupola, cupolaSchema } from './shapes/cupola';
+import { checkGem, gemSchema } from './shapes/gem';
+import { checkGeodesic, geodesicSchema } from './shapes/geodesic';
+import {
+  barrelVaultSchema,
+  checkLattice,
+  doubleLayerSchema,
+  flatLatticeSchema,
+  vaultStruts,
+} from './shapes/lattice';
+import { lengthMm, SHAPE_LIMITS, whole } from './shapes/measures';
+import type { Refuse } from './shapes/measures';
+import { radiusOfEdge } from './stacked-rings';
 
 const platonic = <const K extends string>(kind: K) =>
   z.object({ kind: z.literal(kind), edgeMm: lengthMm('The edge') });
@@ -84,37 +67,29 @@ const kinds = z.discriminatedUnion(
     pyramid,
     bipyramid,
     vaultBay,
+    cupolaSchema,
+    archimedeanSchema,
+    gemSchema,
+    geodesicSchema,
+    barrelVaultSchema,
+    flatLatticeSchema,
+    doubleLayerSchema,
   ],
   {
     error:
-      'Choose a shape: tetrahedron, cube, octahedron, dodecahedron, icosahedron, prism, antiprism, pyramid, bipyramid or vault bay.',
+      'Choose a shape: tetrahedron, cube, octahedron, dodecahedron, icosahedron, prism, antiprism, pyramid, bipyramid, cupola, Archimedean solid, cut gem, geodesic sphere or dome, vault bay, barrel vault, flat lattice or double-layer lattice.',
   },
 );
 
 export type Shape = z.infer<typeof kinds>;
 type VaultBay = Extract<Shape, { kind: 'vault-bay' }>;
-type Based = Extract<Shape, { sides: number }>;
-
-/** Radius to the corners of a regular polygon from its edge, both in mm. */
-export const radiusOfEdge = (edgeMm: number, sides: number): number =>
-  edgeMm / (2 * Math.sin(Math.PI / sides));
+type Based = Extract<Shape, { baseBy: string }>;
 
 /** Radius to the corners of a shape's base, mm. */
 export const baseRadius = (shape: Based): number =>
   shape.baseBy === 'radius' ? shape.baseMm : radiusOfEdge(shape.baseMm, shape.sides);
 
-/** How many struts a bay has, before it is built. */
-function vaultStruts({ divisionsAlong: along, divisionsAcross: across, diagonals }: VaultBay): number {
-  if (diagonals === 'staggered') {
-    const wide = across / 2 + 1;
-    const narrow = across / 2;
-    return wide * along + narrow * (along - 1) + narrow * along * 4 + 2 * narrow;
-  }
-  const square = (across + 1) * along + (along + 1) * across;
-  return diagonals === 'none' ? square : square + along * across;
-}
-
-function checkBase(shape: Based, refuse: (path: string, message: string) => void): void {
+function checkBase(shape: Based, refuse: Refuse): void {
   const { leastStrutMm, mostMm } = SHAPE_LIMITS;
   const radius = baseRadius(shape);
   const edge = 2 * radius * Math.sin(Math.PI / shape.sides);
@@ -132,7 +107,7 @@ function checkBase(shape: Based, refuse: (path: string, message: string) => void
     refuse('heightMm', 'Give the height, or choose all struts of one length.');
 }
 
-function checkVaultBay(bay: VaultBay, refuse: (path: string, message: string) => void): void {
+function checkVaultBay(bay: VaultBay, refuse: Refuse): void {
   if (bay.riseMm > bay.widthMm / 2)
     refuse(
       'riseMm',
@@ -143,7 +118,7 @@ function checkVaultBay(bay: VaultBay, refuse: (path: string, message: string) =>
       'divisionsAcross',
       `Staggered rows need an even number of divisions across; you gave ${bay.divisionsAcross}. Take ${bay.divisionsAcross + 1}.`,
     );
-  const struts = vaultStruts(bay);
+  const struts = vaultStruts(bay.divisionsAlong, bay.divisionsAcross, bay.diagonals);
   if (struts > SHAPE_LIMITS.mostStruts)
     refuse(
       'divisionsAcross',
@@ -159,11 +134,24 @@ function checkVaultBay(bay: VaultBay, refuse: (path: string, message: string) =>
 
 /**
  * The measures of a shape as they are typed and stored, told apart by `kind`. Lengths in mm from 10 to 20,000 (a rise from 0 to
- * half the width), sides 3 to 120, divisions 1 to 60. Every refusal stands at its field and says the limits and the number given.
+ * half the width, of a barrel vault to the width), sides 3 to 120, divisions 1 to 60, turns -180 to 180 degrees, at most 5,000 struts. Every refusal stands at its field and says the limits and the number given.
  */
 export const shapeSchema = kinds.superRefine((shape, context) => {
   const refuse = (path: string, message: string) =>
     context.addIssue({ code: 'custom', path: [path], message });
-  if ('sides' in shape) checkBase(shape, refuse);
-  if (shape.kind === 'vault-bay') checkVaultBay(shape, refuse);
+  if ('baseBy' in shape) checkBase(shape, refuse);
+  switch (shape.kind) {
+    case 'vault-bay':
+      return checkVaultBay(shape, refuse);
+    case 'cupola':
+      return checkCupola(shape, refuse);
+    case 'gem':
+      return checkGem(shape, refuse);
+    case 'geodesic':
+      return checkGeodesic(shape, refuse);
+    case 'barrel-vault':
+    case 'flat-lattice':
+    case 'double-layer':
+      return checkLattice(shape, refuse);
+  }
 });

@@ -1,7 +1,23 @@
 import type { Frame } from './frame';
-import { baseRadius, radiusOfEdge } from './shape-schema';
+import { baseRadius } from './shape-schema';
 import type { Shape } from './shape-schema';
-import { cone, floor, frameOfFaces, funnel, lid, ringIndex, ringJoints, wall, zigzag } from './stacked-rings';
+import { buildArchimedean } from './shapes/archimedean';
+import { buildCupola } from './shapes/cupola';
+import { buildGem } from './shapes/gem';
+import { buildGeodesic } from './shapes/geodesic';
+import { buildBarrelVault, buildDoubleLayer, buildFlatLattice } from './shapes/lattice';
+import {
+  cone,
+  floor,
+  frameOfFaces,
+  funnel,
+  lid,
+  radiusOfEdge,
+  ringIndex,
+  ringJoints,
+  wall,
+  zigzag,
+} from './stacked-rings';
 import { buildVaultBay } from './vault-bay';
 
 const tip = (z: number) => ({ x: 0, y: 0, z });
@@ -68,9 +84,9 @@ function buildDodecahedron(edge: number): Frame {
 /**
  * The frame of a shape.
  * @param shape measures in mm, as `shapeSchema` lets them through
- * @returns a valid frame on the plane z = 0 with its axis along z (a vault bay: along y), joints numbered from the bottom up and
+ * @returns a valid frame on the plane z = 0 with its axis along z (a vault: along y), joints numbered from the bottom up and
  *   anticlockwise, every edge a strut, faces anticlockwise seen from outside
- * @throws RangeError for an antiprism that is neither uniform nor has a height; `shapeSchema` refuses it before
+ * @throws RangeError for an antiprism or cupola that is neither uniform nor has a height; `shapeSchema` refuses it before
  * Source: constructions by rings, own; edge lengths and angles checked against Coxeter, Regular Polytopes, table I.
  */
 export function buildShape(shape: Shape): Frame {
@@ -102,5 +118,19 @@ export function buildShape(shape: Shape): Frame {
       return buildBipyramid(shape.sides, baseRadius(shape), shape.upperMm, shape.lowerMm);
     case 'vault-bay':
       return buildVaultBay(shape);
+    case 'cupola':
+      return buildCupola(shape);
+    case 'archimedean':
+      return buildArchimedean(shape);
+    case 'gem':
+      return buildGem(shape);
+    case 'geodesic':
+      return buildGeodesic(shape);
+    case 'barrel-vault':
+      return buildBarrelVault(shape);
+    case 'flat-lattice':
+      return buildFlatLattice(shape);
+    case 'double-layer':
+      return buildDoubleLayer(shape);
   }
 }

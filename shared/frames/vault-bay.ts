@@ -1,14 +1,23 @@
 import type { Frame, Joint } from './frame';
-import type { Shape } from './shape-schema';
 import { frameOfFaces } from './stacked-rings';
 
-type VaultBay = Extract<Shape, { kind: 'vault-bay' }>;
+/** Measures of a vault in mm; staggered rows need an even number of divisions across. */
+type Vault = {
+  /** Of the shape it is built for; not read. */
+  kind?: string;
+  lengthMm: number;
+  widthMm: number;
+  riseMm: number;
+  divisionsAlong: number;
+  divisionsAcross: number;
+  diagonals: 'none' | 'one-way' | 'alternating' | 'staggered';
+};
 
 /** Half the angle of an arc below which it is straight: on the widest bay a rise of 0.005 mm. */
 const STRAIGHT = 1e-6;
 
 /** Places on the arc of a chord and a rise, evenly spaced by angle, from the left foot to the right one. */
-function arc(widthMm: number, riseMm: number, divisions: number): { x: number; z: number }[] {
+export function arc(widthMm: number, riseMm: number, divisions: number): { x: number; z: number }[] {
   const half = 2 * Math.atan2(2 * riseMm, widthMm);
   return Array.from({ length: divisions + 1 }, (_, at) => {
     const share = (2 * at) / divisions - 1;
@@ -24,7 +33,7 @@ function arc(widthMm: number, riseMm: number, divisions: number): { x: number; z
   });
 }
 
-function squareBay(bay: VaultBay): Frame {
+function squareBay(bay: Vault): Frame {
   const { divisionsAlong: along, divisionsAcross: across, diagonals } = bay;
   const joints: Joint[] = arc(bay.widthMm, bay.riseMm, across).flatMap(({ x, z }) =>
     Array.from({ length: along + 1 }, (_, j) => ({ x, y: (j * bay.lengthMm) / along, z })),
@@ -41,7 +50,7 @@ function squareBay(bay: VaultBay): Frame {
   return frameOfFaces(joints, faces);
 }
 
-function staggeredBay(bay: VaultBay): Frame {
+function staggeredBay(bay: Vault): Frame {
   const { divisionsAlong: along, divisionsAcross: across } = bay;
   const rows = arc(bay.widthMm, bay.riseMm, across);
   const starts: number[] = [];
@@ -67,10 +76,10 @@ function staggeredBay(bay: VaultBay): Frame {
 }
 
 /**
- * One bay of a barrel vault as a lattice: arcs over the width, straight lines along the vault, and diagonals.
+ * A barrel vault, or one bay of it, as a lattice: arcs over the width, straight lines along the vault, and diagonals.
  * @param bay measures in mm as `shapeSchema` allows them; staggered rows need an even number of divisions across
  * @returns joints numbered row by row from the left foot (x = -width/2) to the right one, each row from y = 0 to the length; feet at
  *   z = 0; faces anticlockwise from above
  */
-export const buildVaultBay = (bay: VaultBay): Frame =>
+export const buildVaultBay = (bay: Vault): Frame =>
   bay.diagonals === 'staggered' ? staggeredBay(bay) : squareBay(bay);
