@@ -147,7 +147,7 @@ function placeRefusal({ step, traveller, missingPieces, person, now }: World): R
 function laidDown(step: Step): Step {
   return {
     ...step,
-    state: step.rework ? 'rework' : 'ready',
+    state: openState(step),
     crew: [],
     startedAt: null,
     handOver: null,
@@ -245,11 +245,14 @@ function finished({ step, traveller, person }: World, at: number, flags: string[
   return passed(base, traveller, at, null);
 }
 
+/** What a step is when it opens: work that was sent back is told from work that was not done yet. */
+const openState = (step: Pick<Step, 'rework'>): 'ready' | 'rework' => (step.rework ? 'rework' : 'ready');
+
 /** Pass a step and make the next one ready. */
 function passed(step: Step, traveller: readonly Step[], at: number, by: string | null): Step[] {
   const next = traveller.find((other) => other.position > step.position);
   const changed: Step[] = [{ ...step, state: 'passed', dryUntil: null, passedAt: at, passedBy: by }];
-  if (next?.state === 'waiting') changed.push({ ...next, state: 'ready' });
+  if (next?.state === 'waiting') changed.push({ ...next, state: openState(next) });
   return changed;
 }
 
@@ -283,8 +286,9 @@ function record({ step, person, now }: World, crew: string[], happenedAt: number
 
 function endDrying({ step, traveller, now }: World, event: string): Decision {
   if (step.state !== 'drying') return no('STEP_STATE', { state: step.state });
-  // A hold stops the step, its paint dries all the same: it goes on to its check and no further.
-  if (step.needsCheck || step.held) return done([{ ...step, state: 'to check', dryUntil: null }], event);
+  // A hold stops the step, its paint dries all the same: it goes on to its check and no further. So does what was flagged.
+  if (step.needsCheck || step.held || step.flags.length > 0)
+    return done([{ ...step, state: 'to check', dryUntil: null }], event);
   return done(passed(step, traveller, now, null), event);
 }
 
@@ -341,9 +345,11 @@ function rework(world: World, reason: string, targetId: string): Decision {
   if (refusal) return refuse(refusal);
   const target = traveller.find((other) => other.id === targetId);
   if (!target || target.position > step.position) return no('REWORK_TARGET', { targetId });
+  // What was typed in from paper may be sent back before its turn has come: then it waits, and opens as rework.
+  const tooEarly = traveller.some((other) => other.position < target.position && other.state !== 'passed');
   const reopened: Step = {
     ...target,
-    state: 'rework',
+    state: tooEarly ? 'waiting' : 'rework',
     rework: { reason, by: person.id, at: now },
     crew: [],
     handOver: null,

@@ -30,7 +30,7 @@ export function followPieces(
 
 function opened(steps: readonly Step[]): Step[] {
   const [first] = steps;
-  return first?.state === 'waiting' ? [{ ...first, state: 'ready' }] : [];
+  return first?.state === 'waiting' ? [{ ...first, state: first.rework ? 'rework' : 'ready' }] : [];
 }
 
 function closed(steps: readonly Step[]): Step[] {
@@ -45,7 +45,6 @@ function closed(steps: readonly Step[]): Step[] {
       finishedAt: null,
       finishedBy: null,
       dryUntil: null,
-      rework: null,
       flags: [],
     }));
 }
