@@ -30,7 +30,7 @@ export const DEFAULT_SPLIT_WISH: SplitWish = {
   mostMinutes: null,
   minutesPerCut: 1.5,
   minutesPerJoint: 2,
-  box: { x: 2000, y: 2000, z: 1500 },
+  box: null,
   mostKg: 20,
   keep: [],
   seed: 1,

@@ -73,14 +73,14 @@ export const PLACEMENTS: ({ frame: string } & Omit<PlacementInput, 'frameId' | '
     name: 'Canopy',
     at: { x: 0, y: 0, z: 2600 },
     turn: UPRIGHT,
-    pattern: { kind: 'row', count: 14, step: { x: 1000, y: 0, z: 0 } },
+    pattern: { kind: 'row', count: 14, step: { x: 0, y: 1000, z: 0 } },
   },
   ...['Four-side lantern', 'Five-side lantern', 'Six-side lantern'].map((frame, row) => ({
     frame,
     name: `${frame}s`,
-    at: { x: 800, y: -700 + 700 * row, z: 1700 + 150 * row },
+    at: { x: -700 + 700 * row, y: 800, z: 1700 + 150 * row },
     turn: UPRIGHT,
-    pattern: { kind: 'row' as const, count: 8, step: { x: 1700, y: 0, z: 0 } },
+    pattern: { kind: 'row' as const, count: 8, step: { x: 0, y: 1700, z: 0 } },
   })),
 ];
 

@@ -61,6 +61,7 @@ export type Projected = Float64Array;
  * @param joints mm, z upwards
  * @param ball of all joints
  * @param camera how it is looked at
+ * @param scale pixels of one millimetre before the zoom
  * @param width of the paper, px
  * @param height of the paper, px
  * @param into reused when it is long enough
@@ -69,6 +70,7 @@ export function project(
   joints: readonly Joint[],
   ball: Ball,
   camera: Camera,
+  scale: number,
   width: number,
   height: number,
   into?: Projected,
@@ -76,7 +78,7 @@ export function project(
   const points = into && into.length >= 3 * joints.length ? into : new Float64Array(3 * joints.length);
   const [ct, st] = [Math.cos(radians(camera.turn)), Math.sin(radians(camera.turn))];
   const [cl, sl] = [Math.cos(radians(camera.tilt)), Math.sin(radians(camera.tilt))];
-  const scale = scaleOf(ball, camera, width, height);
+  const size = scale * camera.zoom;
   const left = width * (0.5 + camera.panX);
   const top = height * (0.5 + camera.panY);
   let at = 0;
@@ -86,8 +88,8 @@ export function project(
     const z = joint.z - ball.z;
     const right = ct * x - st * y;
     const away = st * x + ct * y;
-    points[at] = left + scale * right;
-    points[at + 1] = top - scale * (cl * z + sl * away);
+    points[at] = left + size * right;
+    points[at + 1] = top - size * (cl * z + sl * away);
     points[at + 2] = sl * z - cl * away;
     at += 3;
   }
@@ -95,15 +97,30 @@ export function project(
 }
 
 const EDGE_PX = 28;
-/** A drawing seldom fills the ball that holds it from top to foot. */
-const UPRIGHT_SHARE = 0.85;
+const LEAST_PX = 20;
 
-/** Pixels of one millimetre. */
-export const scaleOf = (ball: Ball, camera: Camera, width: number, height: number): number => {
-  const across = Math.max(20, width - 2 * EDGE_PX) / (2 * ball.radius);
-  const up = Math.max(20, height - 2 * EDGE_PX) / (2 * ball.radius * UPRIGHT_SHARE);
-  return camera.zoom * Math.min(across, up);
-};
+/**
+ * Pixels of one millimetre at which the drawing fills the paper, looked at in one way.
+ * @param camera how it is looked at; its zoom and pan do not count
+ */
+export function fillScale(
+  joints: readonly Joint[],
+  ball: Ball,
+  camera: Camera,
+  width: number,
+  height: number,
+): number {
+  const points = project(joints, ball, { ...camera, panX: 0, panY: 0 }, 1, 0, 0);
+  let [across, up] = [1, 1];
+  for (let at = 0; at < points.length; at += 3) {
+    across = Math.max(across, Math.abs(points[at] ?? 0));
+    up = Math.max(up, Math.abs(points[at + 1] ?? 0));
+  }
+  return Math.min(
+    Math.max(LEAST_PX, width - 2 * EDGE_PX) / (2 * across),
+    Math.max(LEAST_PX, height - 2 * EDGE_PX) / (2 * up),
+  );
+}
 
 const radians = (degrees: number): number => (degrees * Math.PI) / 180;
 

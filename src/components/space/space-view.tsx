@@ -12,7 +12,7 @@ import type { Joint, Strut } from '../../../shared/frames';
 import { Action } from '../ui/action';
 import { ChoiceRow } from '../ui/heads';
 import { useWidth } from '../ui/use-width';
-import { ballOf, moved, project, START, VIEWS, type Camera, type Projected } from './camera';
+import { ballOf, fillScale, moved, project, START, VIEWS, type Camera, type Projected } from './camera';
 import { paintLabels, paintStruts, type Label, type StrutLook } from './paint';
 import { strutAt, strutsIn } from './picking';
 
@@ -66,11 +66,17 @@ export function SpaceView(props: SpaceViewProps) {
   const [holder, width] = useWidth<HTMLDivElement>(720);
   const height = Math.max(280, Math.min(620, Math.round(width * 0.62)));
   const [camera, setCamera] = useState<Camera>(START);
+  // It fills the paper in the view that was chosen and keeps its size while it is turned.
+  const [chosen, setChosen] = useState<Camera>(START);
   const [current, setCurrent] = useState(-1);
   const [box, setBox] = useState<{ x1: number; y1: number; x2: number; y2: number } | null>(null);
   const drag = useRef<Drag | null>(null);
   const points = useRef<Projected>(new Float64Array(0));
   const ball = useMemo(() => ballOf(joints), [joints]);
+  const scale = useMemo(
+    () => fillScale(joints, ball, chosen, width, height),
+    [joints, ball, chosen, width, height],
+  );
   const theme = useThemeName();
   const mayPick = useCallback((strut: number) => !look(strut).faint, [look]);
 
@@ -84,11 +90,11 @@ export function SpaceView(props: SpaceViewProps) {
     paper.setTransform(dense, 0, 0, dense, 0, 0);
     paper.clearRect(0, 0, width, height);
     const colours = coloursOf(sheet);
-    points.current = project(joints, ball, camera, width, height, points.current);
+    points.current = project(joints, ball, camera, scale, width, height, points.current);
     paintStruts(paper, { joints, struts, look, selected, current }, points.current, ball.radius, colours);
     const words = [
-      ...place(labels ?? [], ball, camera, width, height, true),
-      ...place(numbered(numbers, joints, struts, look), ball, camera, width, height, false),
+      ...place(labels ?? [], ball, camera, scale, width, height, true),
+      ...place(numbered(numbers, joints, struts, look), ball, camera, scale, width, height, false),
     ];
     paintLabels(paper, words, colours);
     if (box) {
@@ -97,7 +103,22 @@ export function SpaceView(props: SpaceViewProps) {
       paper.lineWidth = 1.5;
       paper.strokeRect(box.x1, box.y1, box.x2 - box.x1, box.y2 - box.y1);
     }
-  }, [joints, struts, look, selected, current, labels, numbers, camera, ball, width, height, box, theme]);
+  }, [
+    joints,
+    struts,
+    look,
+    selected,
+    current,
+    labels,
+    numbers,
+    camera,
+    ball,
+    scale,
+    width,
+    height,
+    box,
+    theme,
+  ]);
 
   const choose = (found: readonly number[], add: boolean) => {
     if (!onSelect) return;
@@ -170,7 +191,11 @@ export function SpaceView(props: SpaceViewProps) {
           label="view"
           choices={VIEWS.map(({ key, label: words }) => ({ value: key, label: words }))}
           value={view?.key ?? ''}
-          onChange={(key) => setCamera(VIEWS.find((known) => known.key === key)?.camera ?? START)}
+          onChange={(key) => {
+            const next = VIEWS.find((known) => known.key === key)?.camera ?? START;
+            setChosen(next);
+            setCamera(next);
+          }}
         />
         <div className="flex flex-wrap gap-1">
           <Action look="words" label="Nearer" onClick={() => setCamera(moved(camera, { times: NEARER }))}>
@@ -240,6 +265,7 @@ function place(
   labels: readonly Label[],
   ball: ReturnType<typeof ballOf>,
   camera: Camera,
+  scale: number,
   width: number,
   height: number,
   bold: boolean,
@@ -248,6 +274,7 @@ function place(
     labels.map(({ at }) => at),
     ball,
     camera,
+    scale,
     width,
     height,
   );

@@ -28,6 +28,12 @@ export function SheetPage({
   return <Sheet sheet={sheet.data} unit={unit} />;
 }
 
+const MOST_NAMED = 4;
+const alikeWords = (codes: readonly string[]): string =>
+  codes.length <= MOST_NAMED
+    ? listed(codes)
+    : `${codes.slice(0, MOST_NAMED - 1).join(', ')} and ${codes.length - MOST_NAMED + 1} more`;
+
 function Sheet({ sheet, unit }: { sheet: PieceSheet; unit: LengthUnit }) {
   const names = useMemo(() => strutNames(sheet.frame), [sheet.frame]);
   return (
@@ -35,10 +41,10 @@ function Sheet({ sheet, unit }: { sheet: PieceSheet; unit: LengthUnit }) {
       <div className="flex flex-wrap items-baseline justify-between gap-x-8 gap-y-2">
         <p>
           {sheet.mark && <PieceMark mark={sheet.mark} />}
-          {` traveller revision ${sheet.travellerRevision}`}
+          {`${sheet.mark ? ' in the drawing. T' : 'T'}raveller revision ${sheet.travellerRevision}`}
           {sheet.hand && `, ${sheet.hand} hand`}
           {sheet.massKg !== null && `, ${sheet.massKg.toFixed(1)} kg of wood`}
-          {sheet.alike.length > 0 && `, the same drawing as ${listed(sheet.alike)}`}
+          {sheet.alike.length > 0 && `, the same drawing as ${alikeWords(sheet.alike)}`}
         </p>
         <span className="no-print">
           <Action onClick={() => window.print()}>Print this sheet</Action>

@@ -317,9 +317,7 @@ function PieceList({
             <th scope="col">size</th>
             <th scope="col">alike</th>
             <th scope="col">stiff</th>
-            <th scope="col">
-              <span className="sr-only">actions</span>
-            </th>
+            {keep && <th scope="col">when split again</th>}
           </tr>
         </thead>
         <tbody>
@@ -327,7 +325,13 @@ function PieceList({
             return (
               <tr key={piece.key}>
                 <th scope="row">
-                  <PieceMark mark={piece.mark} />
+                  <Action
+                    look="words"
+                    label={only === piece.key ? 'Show all pieces' : `Show piece ${piece.mark.letter} alone`}
+                    onClick={() => onOnly(only === piece.key ? null : piece.key)}
+                  >
+                    <PieceMark mark={piece.mark} />
+                  </Action>
                 </th>
                 <td>{piece.struts.length}</td>
                 <td>{Math.round(piece.minutes)}</td>
@@ -335,31 +339,22 @@ function PieceList({
                 <td>{sizeWords(piece.sizeMm, unit)}</td>
                 <td>{alikeWords(plan, piece)}</td>
                 <td>{piece.mechanisms === 0 ? 'yes' : `moves ${counted(piece.mechanisms, 'way')}`}</td>
-                <td>
-                  <div className="flex items-center gap-x-4">
-                    <Action
-                      look="words"
-                      label={`Show piece ${piece.mark.letter} alone`}
-                      onClick={() => onOnly(only === piece.key ? null : piece.key)}
+                {keep && onKeep && (
+                  <td>
+                    <CheckField
+                      checked={keep.includes(piece.key)}
+                      onChange={(event) =>
+                        onKeep(
+                          event.target.checked
+                            ? [...keep, piece.key]
+                            : keep.filter((key) => key !== piece.key),
+                        )
+                      }
                     >
-                      {only === piece.key ? 'Show all' : 'Show alone'}
-                    </Action>
-                    {keep && onKeep && (
-                      <CheckField
-                        checked={keep.includes(piece.key)}
-                        onChange={(event) =>
-                          onKeep(
-                            event.target.checked
-                              ? [...keep, piece.key]
-                              : keep.filter((key) => key !== piece.key),
-                          )
-                        }
-                      >
-                        keep
-                      </CheckField>
-                    )}
-                  </div>
-                </td>
+                      keep
+                    </CheckField>
+                  </td>
+                )}
               </tr>
             );
           })}
