@@ -37,3 +37,5 @@ export { fieldApplies, SHAPE_FORMS } from './shape-forms';
 export type { ShapeField, ShapeForm } from './shape-forms';
 export { ARCHIMEDEAN_SOLIDS } from './shapes/archimedean-points';
 export type { ArchimedeanSolid } from './shapes/archimedean-points';
+export { applyFrameEdit } from './edits';
+export type { EditedFrame, EditRefusal, EditRefusalCode, FrameEdit } from './edits';

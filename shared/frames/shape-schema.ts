@@ -140,18 +140,10 @@ export const shapeSchema = kinds.superRefine((shape, context) => {
   const refuse = (path: string, message: string) =>
     context.addIssue({ code: 'custom', path: [path], message });
   if ('baseBy' in shape) checkBase(shape, refuse);
-  switch (shape.kind) {
-    case 'vault-bay':
-      return checkVaultBay(shape, refuse);
-    case 'cupola':
-      return checkCupola(shape, refuse);
-    case 'gem':
-      return checkGem(shape, refuse);
-    case 'geodesic':
-      return checkGeodesic(shape, refuse);
-    case 'barrel-vault':
-    case 'flat-lattice':
-    case 'double-layer':
-      return checkLattice(shape, refuse);
-  }
+  if (shape.kind === 'vault-bay') checkVaultBay(shape, refuse);
+  else if (shape.kind === 'cupola') checkCupola(shape, refuse);
+  else if (shape.kind === 'gem') checkGem(shape, refuse);
+  else if (shape.kind === 'geodesic') checkGeodesic(shape, refuse);
+  else if (shape.kind === 'barrel-vault' || shape.kind === 'flat-lattice' || shape.kind === 'double-layer')
+    checkLattice(shape, refuse);
 });

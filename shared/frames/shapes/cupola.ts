@@ -20,6 +20,7 @@ type Cupola = z.infer<typeof cupolaSchema>;
 /** With more sides the lower ring reaches farther out than the struts are long. */
 const MOST_UNIFORM_SIDES = 5;
 
+/** Refuses a cupola whose struts do not meet, or that is too wide, each at its field. */
 export function checkCupola(shape: Cupola, refuse: Refuse): void {
   if (shape.uniform && shape.sides > MOST_UNIFORM_SIDES)
     refuse(

@@ -30,6 +30,7 @@ export const gemSchema = z.object({
 });
 type Gem = z.infer<typeof gemSchema>;
 
+/** Refuses a gem that lacks measures of its second table, has too many struts or some too short to cut, each at its field. */
 export function checkGem(gem: Gem, refuse: Refuse): void {
   let whole = true;
   if (gem.foot === 'table')

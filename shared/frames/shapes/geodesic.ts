@@ -23,6 +23,7 @@ export const geodesicSchema = z.object({
 });
 type Geodesic = z.infer<typeof geodesicSchema>;
 
+/** Refuses a dome of more rows than there are, and struts too short to cut, each at its field. */
 export function checkGeodesic(shape: Geodesic, refuse: Refuse): void {
   const most = 3 * shape.frequency - 1;
   if (shape.part === 'dome') {

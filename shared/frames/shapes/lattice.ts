@@ -75,6 +75,7 @@ function strutsOf(shape: BarrelVault | FlatLattice | DoubleLayer): number {
     : vaultStruts(along, across, DIAGONALS[shape.pattern]);
 }
 
+/** Refuses a lattice of too high a rise, too many struts or too short ones, each at its field. */
 export function checkLattice(shape: BarrelVault | FlatLattice | DoubleLayer, refuse: Refuse): void {
   if (shape.kind === 'barrel-vault' && shape.riseMm > shape.widthMm)
     refuse(
