@@ -2,17 +2,21 @@ import { describe, expect, it } from 'vitest';
 import { decide, type Command, type Step, type World } from '../../../shared/travellers';
 import { inHand, NOW, personOf, stepOf, worldOf } from './fixtures';
 
-const asked = (world: World, command: Command) => {
+/** What a command led to: the changed steps by id, or why not. */
+interface Asked {
+  steps?: Map<string, Step>;
+  event?: string;
+  flags?: string[];
+  refused?: string;
+  details?: Record<string, unknown>;
+}
+
+function asked(world: World, command: Command): Asked {
   const decision = decide(world, command);
-  return decision.ok
-    ? { steps: new Map(decision.value.steps.map((step) => [step.id, step])), ...pick(decision.value) }
-    : { refused: decision.refusal.code, details: decision.refusal.details };
-};
-const pick = ({ event, flags, warnings }: { event: string; flags: string[]; warnings: unknown[] }) => ({
-  event,
-  flags,
-  warnings,
-});
+  if (!decision.ok) return { refused: decision.refusal.code, details: decision.refusal.details };
+  const { steps, event, flags } = decision.value;
+  return { steps: new Map(steps.map((step) => [step.id, step])), event, flags };
+}
 const claim: Command = { type: 'claim' };
 const finish: Command = { type: 'finish' };
 
