@@ -1,10 +1,11 @@
 import { ok, refuse, type Result } from '../kernel/result';
+import { lateFinish, recorded } from './after-the-fact';
 import { clockGate } from './clocks';
-import { gatePerson, stopOver, type Refusal, type World } from './gates';
+import { gatePerson, stopOver, type Refusal, type Transition, type World } from './gates';
 import { OFFLINE_CLAIM_MS } from './limits';
 import type { Step } from './step';
 
-export type { PersonFacts, Refusal, RefusalCode, World } from './gates';
+export type { PersonFacts, Refusal, RefusalCode, Transition, World } from './gates';
 
 /** What somebody asks of a step. `happenedAt` (ms) is set when it was done before it reached the server. */
 export type Command =
@@ -23,16 +24,6 @@ export type Command =
   | { type: 'rework'; reason: string; targetId: string }
   | { type: 'hold'; reason: string }
   | { type: 'release'; note: string };
-
-/** What an allowed command does: every step it changes, whole, and what goes into the day log. */
-export interface Transition {
-  steps: Step[];
-  event: string;
-  /** Rules that what already happened broke; it stands, but unlocks nothing by itself. */
-  flags: string[];
-  /** Advice that does not refuse, such as a second coat outside its window. */
-  warnings: { code: string; details: Record<string, unknown> }[];
-}
 
 type Decision = Result<Transition, Refusal>;
 
@@ -77,7 +68,7 @@ export function decide(world: World, command: Command): Decision {
     case 'record':
       return record(world, command.crew, command.happenedAt);
     case 'clock-ended':
-      return endDrying(world, 'step.dried');
+      return clockEnded(world);
     case 'end-drying':
       return endDrying(world, 'step.drying-ended-early');
     case 'still-wet':
@@ -107,7 +98,10 @@ function claim(world: World, happenedAt: number | undefined): Decision {
   const refusal = placeRefusal(world) ?? gatePerson(world, 'claim');
   if (refusal) return refuse(refusal);
   const crew = [...step.crew, { personId: person.id, claimedAt: now }];
-  return done([{ ...step, state: 'in hand', crew, doers: withDoer(step, person.id) }], 'step.claimed', {
+  // Who stands at the bench needs no place of another's: an offer to them ends.
+  const handOver = step.handOver?.to === person.id ? null : step.handOver;
+  const claimed: Step = { ...step, state: 'in hand', crew, doers: withDoer(step, person.id), handOver };
+  return done([claimed], 'step.claimed', {
     warnings: clockGate(world.traveller, step, now).warnings,
   });
 }
@@ -176,6 +170,7 @@ function accept(world: World): Decision {
   if (offered?.to !== person.id) return no('HAND_OVER_NOT_OFFERED');
   if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
   if (step.held) return no('STEP_HELD', { ...step.held });
+  if (holds(step, person.id)) return no('STEP_ALREADY_YOURS');
   const refusal = gatePerson(world, 'claim');
   if (refusal) return refuse(refusal);
   const crew = step.crew.map((member) =>
@@ -210,7 +205,11 @@ function start(world: World): Decision {
 
 function finish(world: World, happenedAt: number | undefined): Decision {
   const { step, person, now } = world;
-  if (!holds(step, person.id)) return no('STEP_NOT_YOURS', { state: step.state });
+  if (!holds(step, person.id)) {
+    return happenedAt !== undefined && step.doers.includes(person.id)
+      ? lateFinish(world, happenedAt)
+      : no('STEP_NOT_YOURS', { state: step.state });
+  }
   if (step.state !== 'in hand') return no('STEP_STATE', { state: step.state });
   const broken = finishRefusal(world);
   if (happenedAt === undefined)
@@ -233,7 +232,7 @@ function finished({ step, traveller, person }: World, at: number, flags: string[
     ...step,
     crew: [],
     handOver: null,
-    startedAt: step.startedAt ?? at,
+    startedAt: Math.min(step.startedAt ?? at, at),
     finishedAt: at,
     finishedBy: person.id,
     rework: null,
@@ -256,32 +255,9 @@ function passed(step: Step, traveller: readonly Step[], at: number, by: string |
   return changed;
 }
 
-function record({ step, person, now }: World, crew: string[], happenedAt: number): Decision {
-  if (step.state === 'passed') return no('STEP_STATE', { state: step.state });
-  const flags = [...new Set([...step.flags, 'RECORDED_FROM_PAPER'])];
-  if (step.held) flags.push('STEP_HELD');
-  if (step.state === 'waiting') flags.push('STEP_NOT_READY');
-  const doers = [...new Set([...step.doers, ...crew])];
-  const at = Math.min(happenedAt, now);
-  return done(
-    [
-      {
-        ...step,
-        state: 'to check',
-        crew: [],
-        handOver: null,
-        doers,
-        startedAt: step.startedAt ?? at,
-        finishedAt: at,
-        finishedBy: crew[0] ?? person.id,
-        dryUntil: null,
-        rework: null,
-        flags,
-      },
-    ],
-    'step.recorded',
-    { flags },
-  );
+function record(world: World, crew: string[], happenedAt: number): Decision {
+  const { state } = world.step;
+  return state === 'passed' ? no('STEP_STATE', { state }) : recorded(world, crew, happenedAt);
 }
 
 function endDrying({ step, traveller, now }: World, event: string): Decision {
@@ -292,11 +268,22 @@ function endDrying({ step, traveller, now }: World, event: string): Decision {
   return done(passed(step, traveller, now, null), event);
 }
 
+function clockEnded(world: World): Decision {
+  const { step, now } = world;
+  // "Still wet" may have been said between the look at the clock and this.
+  if (step.state === 'drying' && step.dryUntil !== null && now < step.dryUntil) {
+    return no('STEP_CLOCK_RUNNING', { clock: 'touchDry', until: step.dryUntil, coat: step.name });
+  }
+  return endDrying(world, 'step.dried');
+}
+
 function stillWet({ step, traveller, station, now }: World, seconds: number): Decision {
   const later = traveller.filter((other) => other.position > step.position);
   const dried =
     step.clocks !== null && step.finishedAt !== null && step.state !== 'in hand' && step.state !== 'rework';
-  if (!dried || later.some((other) => other.state !== 'waiting' && other.state !== 'ready')) {
+  const untouched = (other: Step) =>
+    other.state === 'waiting' || other.state === 'ready' || other.state === 'rework';
+  if (!dried || !later.every(untouched)) {
     return no('STEP_STATE', { state: step.state });
   }
   const longer = (wet: Step): Step => ({
@@ -309,7 +296,7 @@ function stillWet({ step, traveller, station, now }: World, seconds: number): De
   // The bay is as cold and damp for its other pieces: their clocks run longer too.
   const others = station.filter((other) => other.id !== step.id && other.state === 'drying').map(longer);
   const closed = later
-    .filter((other) => other.state === 'ready')
+    .filter((other) => other.state !== 'waiting')
     .map((other): Step => ({ ...other, state: 'waiting' }));
   return done([longer(step), ...others, ...closed], 'step.still-wet');
 }

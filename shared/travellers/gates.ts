@@ -55,6 +55,16 @@ export interface World {
   settings: { maxInHand: number; ageRules: AgeRules };
 }
 
+/** What an allowed command does: every step it changes, whole, and what goes into the day log. */
+export interface Transition {
+  steps: Step[];
+  event: string;
+  /** Rules that what already happened broke; it stands, but unlocks nothing by itself. */
+  flags: string[];
+  /** Advice that does not refuse, such as a second coat outside its window. */
+  warnings: { code: string; details: Record<string, unknown> }[];
+}
+
 /** The stop, if any, that covers the step. */
 export function stopOver({ step, stops }: Pick<World, 'step' | 'stops'>): Refusal | null {
   const stop = stops.find((raised) =>
