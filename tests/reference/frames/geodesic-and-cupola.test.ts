@@ -41,7 +41,7 @@ describe('buildShape of a geodesic sphere', () => {
   it.each(CHORDS)('geodesic sphere > frequency %i > chord factors of Kenner', (frequency, chords) => {
     const { lengthClasses } = frameFigures(geodesic(frequency), 0.001);
     expect(lengthClasses.map(({ lengthMm, count }) => [lengthMm / 1000, count])).toEqual(
-      chords.map(([factor, count]) => [expect.closeTo(factor, 5), count]),
+      chords.map(([factor, count]) => [expect.closeTo(factor, 5) as number, count]),
     );
   });
 

@@ -233,7 +233,7 @@ describe('buildShape of a lattice', () => {
     const held = frame.joints.map((_, joint) => frame.struts.filter((strut) => strut.includes(joint)).length);
     expect(held.filter((count) => count === 4)).toHaveLength(59 - 4);
     expect(held.filter((count) => count === 3)).toHaveLength(4);
-    expect(frameFigures(frame, 0.001).lengthClasses.map(({ count }) => count)).toEqual([8, 96, 12]);
+    expect(frameFigures(frame, 0.001).lengthClasses.map(({ count }) => count)).toEqual([8, 12, 96]);
   });
 
   it.each([
@@ -289,9 +289,15 @@ describe('buildShape of a lattice', () => {
 
 describe('SHAPE_FORMS', () => {
   for (const [kind, { label, fields }] of Object.entries(SHAPE_FORMS)) {
-    const start: Record<string, unknown> = { kind };
-    for (const field of fields) start[field.key] = field.start;
-    for (const field of fields) if (!fieldApplies(field, start)) delete start[field.key];
+    const values: Record<string, unknown> = Object.fromEntries(
+      fields.map((field) => [field.key, field.start]),
+    );
+    const start: Record<string, unknown> = {
+      kind,
+      ...Object.fromEntries(
+        fields.filter((field) => fieldApplies(field, values)).map((field) => [field.key, field.start]),
+      ),
+    };
 
     it(`${kind} > its form as it begins > builds a valid frame, with a label in words`, () => {
       const shape = shapeSchema.parse(start);
