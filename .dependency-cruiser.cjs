@@ -8,6 +8,7 @@ const AREAS = [
   'safety',
   'frames',
   'split',
+  'hanging',
   'materials',
   'crib',
   'travellers',
