@@ -1,3 +1,4 @@
+import { readFile } from 'node:fs/promises';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { formatObj } from '../../shared/frames';
@@ -153,5 +154,52 @@ describe('drawing and split', () => {
       .click();
     await page.getByRole('region', { name: 'The proposal' }).waitFor({ timeout: 30_000 });
     await expectNoSidewaysScroll(page, 'the split');
+  });
+
+  it('frame > a dome by its measures, then joint by joint > undone and done again, a strut that lies on another refused, kept, saved as CSV and read again', async () => {
+    const { page, errors } = await hall.pageOf(browser, await organiser(), 'drawing', 'laptop');
+    await page.getByRole('link', { name: 'A new shape' }).first().click();
+    await page.getByLabel('name of the frame').fill('Dome');
+    await page.getByLabel('shape', { exact: true }).selectOption('geodesic');
+    await page.getByLabel('frequency, parts of each edge').fill('9');
+    await page.getByRole('button', { name: 'Add this frame' }).click();
+    await page.getByLabel('frequency, parts of each edge').and(page.locator('[aria-invalid=true]')).waitFor();
+    await page.getByLabel('frequency, parts of each edge').fill('2');
+    await page.getByLabel('part', { exact: true }).selectOption('sphere');
+    await page.getByRole('button', { name: 'Add this frame' }).click();
+    // Class I, frequency 2: 10 f^2 + 2 joints and 30 f^2 struts.
+    await page.getByText('42 joints, 120 struts').first().waitFor();
+    await page.getByRole('button', { name: 'By numbers' }).click();
+    await page.getByRole('button', { name: 'Take out strut 1', exact: true }).click();
+    await page.getByText('119 struts').first().waitFor();
+    await page.getByRole('button', { name: 'Undo' }).click();
+    await page.getByText('120 struts').first().waitFor();
+    await page.getByRole('button', { name: 'Redo' }).click();
+    await page.getByLabel('new strut, from joint').fill('1');
+    await page.getByLabel('new strut, to joint').fill('99');
+    await page.getByRole('button', { name: 'Add this strut' }).click();
+    await page.getByText('There is no joint 99').waitFor();
+    await page.getByLabel('joint 1, x').fill('wide');
+    await page.getByLabel('joint 1, x').blur();
+    await page.getByText(/"wide" is no length/).waitFor();
+    await expectNoAxeViolations(page, 'a frame by numbers');
+    await page.getByRole('button', { name: 'Keep it' }).click();
+    await page.getByText('Typed joint by joint').waitFor();
+    const [download] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'CSV' }).click(),
+    ]);
+    const file = await download.path();
+    await page.getByRole('link', { name: 'From a file' }).first().click();
+    await page.locator('input[type=file]').setInputFiles({
+      name: 'dome.csv',
+      mimeType: 'text/csv',
+      buffer: await readFile(file),
+    });
+    await page.getByLabel('name of the frame').fill('Dome again');
+    await page.getByRole('button', { name: 'Add this frame' }).click();
+    await page.getByRole('heading', { name: 'Dome again' }).waitFor();
+    await page.getByText('42 joints, 119 struts').first().waitFor();
+    expect(errors).toEqual([]);
   });
 });

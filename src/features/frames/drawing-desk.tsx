@@ -12,6 +12,7 @@ import { Pending } from '../../components/ui/pending';
 import { Refusal } from '../../components/ui/refusal';
 import { useDrawing, useJoinedDrawing, useReloadDrawing } from '../../lib/drawing';
 import { counted } from '../../lib/formats';
+import { CutLengthsTable } from './cut-lengths-table';
 import { DrawingFigures } from './drawing-figures';
 import { DrawingSettingsForm } from './drawing-settings-form';
 import { PlacementForm } from './placement-form';
@@ -89,6 +90,7 @@ export function DrawingDesk({
               numbers={numbers}
             />
             <DrawingFigures joined={joined} settings={view.settings} unit={unit} />
+            <CutLengthsTable frame={joined.frame} settings={view.settings} unit={unit} />
           </>
         )}
       </section>

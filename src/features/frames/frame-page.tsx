@@ -5,7 +5,9 @@ import { Action } from '../../components/ui/action';
 import { ConfirmAction } from '../../components/ui/confirm-action';
 import { DimensionHead } from '../../components/ui/heads';
 import { counted } from '../../lib/formats';
+import { FrameDownloads } from './frame-downloads';
 import { FramePreview } from './frame-preview';
+import { FrameTable } from './frame-table';
 import { ObjForm } from './obj-form';
 import { ShapeForm } from './shape-form';
 
@@ -25,9 +27,10 @@ const usedWords = (pieces: number): string =>
 
 /** One frame: its drawing and figures, or the form that changes it. */
 export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: FramePageProps) {
-  const [editing, setEditing] = useState(false);
+  const [form, setForm] = useState<'none' | 'source' | 'table'>('none');
+  const editing = form !== 'none';
   const wish = { method: 'PUT', path: `${path}/${frame.id}` } as const;
-  const shut = () => setEditing(false);
+  const shut = () => setForm('none');
   const done = async () => {
     await onChanged();
     shut();
@@ -43,22 +46,37 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
           Its pieces are drawn anew. Once work has begun on one of them only the name can change.
         </p>
       )}
-      {editing && source.kind === 'shape' && (
+      {form === 'source' && source.kind === 'shape' && (
         <ShapeForm
           unit={unit}
           wish={wish}
           words="Keep it"
-          initial={{ name: frame.name, shape: source.shape }}
+          initial={{ name: frame.name, shape: source.shape, revision: frame.revision }}
           onDone={done}
           onCancel={shut}
         />
       )}
-      {editing && source.kind === 'obj' && (
+      {form === 'source' && (source.kind === 'obj' || source.kind === 'csv') && (
         <ObjForm
           unit={unit}
           wish={wish}
           words="Keep it"
-          initial={{ name: frame.name, fileName: source.fileName, geometry: frame.geometry }}
+          initial={{
+            kind: source.kind,
+            name: frame.name,
+            fileName: source.fileName,
+            geometry: frame.geometry,
+            revision: frame.revision,
+          }}
+          onDone={done}
+          onCancel={shut}
+        />
+      )}
+      {form === 'table' && (
+        <FrameTable
+          unit={unit}
+          wish={wish}
+          initial={{ name: frame.name, geometry: frame.geometry, revision: frame.revision }}
           onDone={done}
           onCancel={shut}
         />
@@ -69,8 +87,13 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
             <span className="text-pencil">{sourceWords(source)}</span>
             {mayEdit && (
               <>
-                <Action look="words" onClick={() => setEditing(true)}>
-                  Change
+                {source.kind !== 'table' && (
+                  <Action look="words" onClick={() => setForm('source')}>
+                    Change
+                  </Action>
+                )}
+                <Action look="words" onClick={() => setForm('table')}>
+                  By numbers
                 </Action>
                 <ConfirmAction
                   words="Take out"
@@ -89,6 +112,7 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
                 </ConfirmAction>
               </>
             )}
+            <FrameDownloads frame={frame.geometry} name={frame.name} />
           </div>
           <FramePreview frame={frame.geometry} unit={unit} name={frame.name} />
         </>

@@ -1,6 +1,13 @@
 import { useDeferredValue, useId, useMemo, useRef, useState } from 'react';
 import { createFrameSchema } from '../../../shared/contracts/frames';
-import { formatObj, OBJ_MOST_BYTES, parseObj, type Frame } from '../../../shared/frames';
+import {
+  formatFrameCsv,
+  formatObj,
+  OBJ_MOST_BYTES,
+  parseFrameCsv,
+  parseObj,
+  type Frame,
+} from '../../../shared/frames';
 import { formatLength, type LengthUnit } from '../../../shared/kernel/lengths';
 import { Action } from '../../components/ui/action';
 import { Field, SelectField, TextArea } from '../../components/ui/field';
@@ -27,28 +34,42 @@ export type ObjFormProps = {
   unit: LengthUnit;
   wish: Pick<Wish, 'method' | 'path'>;
   words: string;
-  initial?: { name: string; fileName: string; geometry: Frame };
+  initial?: { kind: FileKind; name: string; fileName: string; geometry: Frame; revision: number };
   onDone: (reply: { id: string }) => unknown;
   onCancel: () => void;
 };
 
-/** A frame from a Wavefront OBJ file: what is wrong is said by line, and can be mended right here. */
+type FileKind = 'obj' | 'csv';
+
+const READERS = { obj: parseObj, csv: parseFrameCsv } as const;
+const WRITERS = { obj: formatObj, csv: formatFrameCsv } as const;
+const HINTS: Readonly<Record<FileKind, string>> = {
+  obj: 'Lines v x y z are joints, l 1 2 struts, f 1 2 3 faces. You can mend it here.',
+  csv: 'Under joint,x,y,z a line for each joint, under strut,from,to one for each strut. You can mend it here.',
+};
+
+/** What a text is: a table begins with the heading of its joints or struts. */
+const kindOf = (text: string): FileKind =>
+  /^\uFEFF?\s*"?(joint|strut|face)"?\s*[,;\t]/i.test(text) ? 'csv' : 'obj';
+
+/** A frame from a file, Wavefront OBJ or a CSV of joints and struts: what is wrong is said by line, and can be mended right here. */
 export function ObjForm({ unit, wish, words, initial, onDone, onCancel }: ObjFormProps) {
   const [name, setName] = useState(initial?.name ?? '');
   const [fileName, setFileName] = useState(initial?.fileName ?? '');
-  const [text, setText] = useState(() => (initial ? formatObj(initial.geometry) : ''));
+  const [text, setText] = useState(() => (initial ? WRITERS[initial.kind](initial.geometry) : ''));
   const [mmPerUnit, setMmPerUnit] = useState('1');
   const [unread, setUnread] = useState<string | null>(null);
   const later = useDeferredValue(text);
   const reading = useMemo(
-    () => (later.trim() === '' ? null : parseObj(later, { mmPerUnit: Number(mmPerUnit) })),
+    () => (later.trim() === '' ? null : READERS[kindOf(later)](later, { mmPerUnit: Number(mmPerUnit) })),
     [later, mmPerUnit],
   );
   const form = useForm<{ id: string }>({
     request: () => {
-      const now = parseObj(text, { mmPerUnit: Number(mmPerUnit) });
+      const kind = kindOf(text);
+      const now = READERS[kind](text, { mmPerUnit: Number(mmPerUnit) });
       // Kept in millimetres, whatever the file was drawn in.
-      const inMm = now.ok && mmPerUnit !== '1' ? formatObj(now.value.frame) : text;
+      const inMm = now.ok && mmPerUnit !== '1' ? WRITERS[kind](now.value.frame) : text;
       const own =
         text.trim() === ''
           ? [{ path: 'text', code: 'empty', message: 'Choose a file, or paste its text.' }]
@@ -57,7 +78,13 @@ export function ObjForm({ unit, wish, words, initial, onDone, onCancel }: ObjFor
             : [{ path: 'text', code: 'obj', message: wrongLines(now.refusal.length) }];
       const checked = checkInput(
         createFrameSchema,
-        { kind: 'obj', name, fileName: fileName || 'pasted text', text: inMm },
+        {
+          kind,
+          name,
+          fileName: fileName || 'pasted text',
+          text: inMm,
+          ...(initial ? { revision: initial.revision } : {}),
+        },
         own,
       );
       return 'problems' in checked ? checked : { ...wish, body: checked.body };
@@ -76,7 +103,7 @@ export function ObjForm({ unit, wish, words, initial, onDone, onCancel }: ObjFor
     try {
       setText(await file.text());
       setFileName(file.name);
-      if (name.trim() === '') setName(file.name.replace(/\.obj$/i, ''));
+      if (name.trim() === '') setName(file.name.replace(/\.(obj|csv)$/i, ''));
     } catch {
       setUnread(`${file.name} could not be read. Choose it again, or open it and paste its text below.`);
     }
@@ -115,7 +142,7 @@ export function ObjForm({ unit, wish, words, initial, onDone, onCancel }: ObjFor
             value={text}
             onChange={(event) => setText(event.target.value)}
             error={form.problem('text')}
-            hint="Lines v x y z are joints, l 1 2 struts, f 1 2 3 faces. You can mend it here."
+            hint={HINTS[kindOf(text)]}
           />
         ) : (
           <p>
@@ -182,10 +209,10 @@ function FilePick({ fileName, onPick }: { fileName: string; onPick: (file: File)
         ref={input}
         id={id}
         type="file"
-        accept=".obj,model/obj,text/plain"
+        accept=".obj,.csv,model/obj,text/csv,text/plain"
         className="sr-only"
         tabIndex={-1}
-        aria-label="Wavefront OBJ file"
+        aria-label="OBJ or CSV file"
         onChange={(event) => {
           const file = event.target.files?.[0];
           // The same file can be chosen again after it was mended.
@@ -193,7 +220,7 @@ function FilePick({ fileName, onPick }: { fileName: string; onPick: (file: File)
           if (file) onPick(file);
         }}
       />
-      <Action onClick={() => input.current?.click()}>Choose an OBJ file</Action>
+      <Action onClick={() => input.current?.click()}>Choose an OBJ or CSV file</Action>
       <span className="text-pencil">{fileName === '' ? 'Nothing chosen yet.' : fileName}</span>
     </div>
   );

@@ -1,107 +1,68 @@
 import { createFrameSchema } from '../../../shared/contracts/frames';
 import type { FieldProblem } from '../../../shared/contracts/errors';
-import { buildShape, shapeSchema, type Frame, type Shape } from '../../../shared/frames';
+import {
+  buildShape,
+  fieldApplies,
+  SHAPE_FORMS,
+  shapeSchema,
+  type Frame,
+  type Shape,
+  type ShapeField,
+} from '../../../shared/frames';
 import { parseLength, type LengthUnit } from '../../../shared/kernel/lengths';
 import { checkInput, typedNumber } from '../../lib/check-input';
 import { typedLength } from '../../lib/formats';
 
 export type ShapeKind = Shape['kind'];
 
-/** A measure of a shape, as it is asked for. */
-export interface Measure {
-  key: string;
-  label: string;
-  sort: 'length' | 'count';
-}
-
-const EDGE: Measure = { key: 'edgeMm', label: 'edge', sort: 'length' };
-const SIDES: Measure = { key: 'sides', label: 'sides', sort: 'count' };
-const BASE: Measure = { key: 'baseMm', label: 'base', sort: 'length' };
-const HEIGHT: Measure = { key: 'heightMm', label: 'height', sort: 'length' };
-
-/** The shapes in the order in which they are offered, with their measures. */
-export const SHAPES: readonly { kind: ShapeKind; label: string; measures: readonly Measure[] }[] = [
-  { kind: 'tetrahedron', label: 'tetrahedron, 4 triangles', measures: [EDGE] },
-  { kind: 'cube', label: 'cube, 6 squares', measures: [EDGE] },
-  { kind: 'octahedron', label: 'octahedron, 8 triangles', measures: [EDGE] },
-  { kind: 'dodecahedron', label: 'dodecahedron, 12 pentagons', measures: [EDGE] },
-  { kind: 'icosahedron', label: 'icosahedron, 20 triangles', measures: [EDGE] },
-  { kind: 'prism', label: 'prism', measures: [SIDES, BASE, HEIGHT] },
-  { kind: 'antiprism', label: 'antiprism', measures: [SIDES, BASE, HEIGHT] },
-  { kind: 'pyramid', label: 'pyramid', measures: [SIDES, BASE, HEIGHT] },
-  {
-    kind: 'bipyramid',
-    label: 'bipyramid, a lantern',
-    measures: [
-      SIDES,
-      BASE,
-      { key: 'upperMm', label: 'upper height', sort: 'length' },
-      { key: 'lowerMm', label: 'lower height', sort: 'length' },
-    ],
-  },
-  {
-    kind: 'vault-bay',
-    label: 'vault bay, a lattice',
-    measures: [
-      { key: 'lengthMm', label: 'length along the vault', sort: 'length' },
-      { key: 'widthMm', label: 'width (chord)', sort: 'length' },
-      { key: 'riseMm', label: 'rise', sort: 'length' },
-      { key: 'divisionsAlong', label: 'divisions along', sort: 'count' },
-      { key: 'divisionsAcross', label: 'divisions across', sort: 'count' },
-    ],
-  },
-];
+/** The shapes in the order in which they are offered. */
+export const SHAPES = Object.entries(SHAPE_FORMS).map(([kind, { label }]) => ({
+  kind: kind as ShapeKind,
+  label,
+}));
 
 /** A shape while it is typed. What one kind asks for and another does not is kept, so that changing the kind loses nothing. */
 export interface ShapeDraft {
   name: string;
   kind: ShapeKind;
-  texts: Readonly<Record<string, string>>;
-  baseBy: 'edge' | 'radius';
-  uniform: boolean;
-  diagonals: 'none' | 'one-way' | 'alternating' | 'staggered';
+  values: Readonly<Record<string, string | boolean>>;
 }
 
-const START_MM: Readonly<Record<string, number>> = {
-  edgeMm: 400,
-  baseMm: 200,
-  heightMm: 400,
-  upperMm: 240,
-  lowerMm: 320,
-  lengthMm: 1000,
-  widthMm: 2800,
-  riseMm: 640,
-};
-const START_COUNT: Readonly<Record<string, number>> = { sides: 6, divisionsAlong: 2, divisionsAcross: 4 };
+/** Round inches for a start: half inches, near enough to the millimetres. */
+const startInch = (mm: number): number => (Math.round((mm / 25.4) * 2) / 2) * 25.4;
 
-/** Round inches for a start: half inches, near enough to the millimetres above. */
-const START_INCH = (mm: number): number => (Math.round((mm / 25.4) * 2) / 2) * 25.4;
+function startOf(field: ShapeField, unit: LengthUnit): string | boolean {
+  if (field.sort !== 'length') return typeof field.start === 'boolean' ? field.start : String(field.start);
+  return typedLength(unit === 'inch' ? startInch(field.start) : field.start, unit);
+}
 
 /** A draft to begin with, or of a shape that is there. */
 export function draftOf(unit: LengthUnit, name = '', shape?: Shape): ShapeDraft {
-  const texts: Record<string, string> = {};
-  for (const [key, mm] of Object.entries(START_MM))
-    texts[key] = typedLength(unit === 'inch' ? START_INCH(mm) : mm, unit);
-  for (const [key, count] of Object.entries(START_COUNT)) texts[key] = String(count);
-  const known: Readonly<Record<string, unknown>> = shape ?? {};
+  const values: Record<string, string | boolean> = {};
+  for (const { fields } of Object.values(SHAPE_FORMS))
+    for (const field of fields) values[field.key] ??= startOf(field, unit);
+  const known: Readonly<Record<string, string | number | boolean | undefined>> = shape ?? {};
   for (const [key, value] of Object.entries(known)) {
-    if (typeof value === 'number') texts[key] = key.endsWith('Mm') ? typedLength(value, unit) : String(value);
+    if (typeof value === 'number')
+      values[key] = key.endsWith('Mm') ? typedLength(value, unit) : String(value);
+    else if (value !== undefined) values[key] = value;
   }
-  return {
-    name,
-    kind: shape?.kind ?? 'octahedron',
-    texts,
-    baseBy: shape && 'baseBy' in shape ? shape.baseBy : 'radius',
-    uniform: shape?.kind === 'antiprism' ? shape.uniform : true,
-    diagonals: shape?.kind === 'vault-bay' ? shape.diagonals : 'staggered',
-  };
+  return { name, kind: shape?.kind ?? 'octahedron', values };
 }
 
-/** The measures that a draft asks for now; struts of one length make an antiprism's height. */
-export const measuresOf = ({ kind, uniform }: ShapeDraft): readonly Measure[] =>
-  (SHAPES.find((shape) => shape.kind === kind)?.measures ?? []).filter(
-    ({ key }) => !(kind === 'antiprism' && uniform && key === 'heightMm'),
-  );
+/** What a field has now; a choice that this kind does not offer is the one it begins with. */
+export function valueOf({ values }: ShapeDraft, field: ShapeField): string | boolean {
+  const value = values[field.key] ?? '';
+  if (field.sort !== 'choice') return value;
+  return field.options.some((option) => option.value === value) ? value : field.start;
+}
+
+/** The fields that a draft asks for now. */
+export function fieldsOf(draft: ShapeDraft): readonly ShapeField[] {
+  const { fields } = SHAPE_FORMS[draft.kind];
+  const now = Object.fromEntries(fields.map((field) => [field.key, valueOf(draft, field)]));
+  return fields.filter((field) => fieldApplies(field, now));
+}
 
 const noLength = (text: string): string =>
   text.trim() === ''
@@ -115,27 +76,25 @@ function readDraft(
 ): { shape: Record<string, unknown>; own: FieldProblem[] } {
   const shape: Record<string, unknown> = { kind: draft.kind };
   const own: FieldProblem[] = [];
-  for (const { key, sort } of measuresOf(draft)) {
-    const text = draft.texts[key] ?? '';
-    if (sort === 'count') shape[key] = typedNumber(text);
+  for (const field of fieldsOf(draft)) {
+    const value = valueOf(draft, field);
+    if (typeof value === 'boolean' || field.sort === 'choice') shape[field.key] = value;
+    else if (field.sort !== 'length') shape[field.key] = typedNumber(value);
     else {
-      const mm = parseLength(text, unit);
-      if (mm === null) own.push({ path: `shape.${key}`, code: 'length', message: noLength(text) });
+      const mm = parseLength(value, unit);
+      if (mm === null) own.push({ path: `shape.${field.key}`, code: 'length', message: noLength(value) });
       // Inches make long fractions of a millimetre; a hundredth is finer than any saw.
-      else shape[key] = Number(mm.toFixed(2));
+      else shape[field.key] = Number(mm.toFixed(2));
     }
   }
-  const based = 'sides' in shape;
-  if (based) shape.baseBy = draft.baseBy;
-  if (draft.kind === 'antiprism') shape.uniform = draft.uniform;
-  if (draft.kind === 'vault-bay') shape.diagonals = draft.diagonals;
   return { shape, own };
 }
 
 /** The body that makes the frame, or every problem beside its field. */
-export function checkDraft(draft: ShapeDraft, unit: LengthUnit) {
+export function checkDraft(draft: ShapeDraft, unit: LengthUnit, revision?: number) {
   const { shape, own } = readDraft(draft, unit);
-  return checkInput(createFrameSchema, { kind: 'shape', name: draft.name, shape }, own);
+  const input = { kind: 'shape', name: draft.name, shape, ...(revision === undefined ? {} : { revision }) };
+  return checkInput(createFrameSchema, input, own);
 }
 
 /** The frame that a draft would make; null while a measure is missing or wrong. */

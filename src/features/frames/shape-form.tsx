@@ -1,8 +1,8 @@
 import { useDeferredValue, useMemo, useState } from 'react';
-import type { Shape } from '../../../shared/frames';
+import type { Shape, ShapeField } from '../../../shared/frames';
 import { formatLength, parseLength, type LengthUnit } from '../../../shared/kernel/lengths';
 import { Action } from '../../components/ui/action';
-import { CheckField, OptionStruts } from '../../components/ui/choices';
+import { CheckField } from '../../components/ui/choices';
 import { Field, SelectField } from '../../components/ui/field';
 import { EmptyNote } from '../../components/ui/note';
 import { Refusal } from '../../components/ui/refusal';
@@ -12,10 +12,10 @@ import { FramePreview } from './frame-preview';
 import {
   checkDraft,
   draftOf,
+  fieldsOf,
   frameOfDraft,
-  measuresOf,
   SHAPES,
-  type Measure,
+  valueOf,
   type ShapeDraft,
   type ShapeKind,
 } from './shape-draft';
@@ -24,7 +24,7 @@ export type ShapeFormProps = {
   unit: LengthUnit;
   wish: Pick<Wish, 'method' | 'path'>;
   words: string;
-  initial?: { name: string; shape: Shape };
+  initial?: { name: string; shape: Shape; revision?: number };
   onDone: (reply: { id: string }) => unknown;
   onCancel: () => void;
 };
@@ -36,13 +36,14 @@ export function ShapeForm({ unit, wish, words, initial, onDone, onCancel }: Shap
   const frame = useMemo(() => frameOfDraft(drawn, unit), [drawn, unit]);
   const form = useForm<{ id: string }>({
     request: () => {
-      const checked = checkDraft(draft, unit);
+      const checked = checkDraft(draft, unit, initial?.revision);
       return 'problems' in checked ? checked : { ...wish, body: checked.body };
     },
     onDone,
   });
   const set = (part: Partial<ShapeDraft>) => setDraft({ ...draft, ...part });
-  const asksBase = measuresOf(draft).some(({ key }) => key === 'sides');
+  const setValue = (key: string, value: string | boolean) =>
+    set({ values: { ...draft.values, [key]: value } });
   return (
     <div className="grid gap-8">
       <form className="grid gap-5" noValidate onSubmit={form.onSubmit}>
@@ -67,55 +68,19 @@ export function ShapeForm({ unit, wish, words, initial, onDone, onCancel }: Shap
             ))}
           </SelectField>
         </div>
-        {asksBase && (
-          <OptionStruts<ShapeDraft['baseBy']>
-            legend="the base is given by"
-            columns={2}
-            value={draft.baseBy}
-            onChange={(baseBy) => set({ baseBy })}
-            error={form.problem('shape.baseBy')}
-            options={[
-              { value: 'edge', label: 'the length of a side' },
-              { value: 'radius', label: 'its radius to the corners' },
-            ]}
-          />
-        )}
-        {draft.kind === 'antiprism' && (
-          <CheckField
-            checked={draft.uniform}
-            onChange={(event) => set({ uniform: event.target.checked })}
-            error={form.problem('shape.uniform')}
-          >
-            All struts of one length; the height follows
-          </CheckField>
-        )}
         <div className="grid grid-cols-2 items-start gap-x-6 gap-y-5 sm:grid-cols-3">
-          {measuresOf(draft).map((measure) => (
-            <MeasureField
-              key={measure.key}
-              measure={measure}
+          {fieldsOf(draft).map((field) => (
+            <ShapeFieldInput
+              key={field.key}
+              field={field}
+              value={valueOf(draft, field)}
               unit={unit}
-              baseBy={draft.baseBy}
-              text={draft.texts[measure.key] ?? ''}
-              onChange={(text) => set({ texts: { ...draft.texts, [measure.key]: text } })}
-              error={form.problem(`shape.${measure.key}`)}
+              label={labelOf(field, draft)}
+              onChange={(value) => setValue(field.key, value)}
+              error={form.problem(`shape.${field.key}`)}
             />
           ))}
         </div>
-        {draft.kind === 'vault-bay' && (
-          <SelectField
-            className="sm:w-1/2"
-            label="diagonals"
-            value={draft.diagonals}
-            onChange={(event) => set({ diagonals: event.target.value as ShapeDraft['diagonals'] })}
-            error={form.problem('shape.diagonals')}
-          >
-            <option value="staggered">staggered rows of triangles</option>
-            <option value="alternating">alternating in each field</option>
-            <option value="one-way">all one way</option>
-            <option value="none">none, the fields stay open</option>
-          </SelectField>
-        )}
         <div className="flex flex-wrap items-center gap-6">
           <Action type="submit" look="main" busy={form.busy}>
             {words}
@@ -136,36 +101,69 @@ export function ShapeForm({ unit, wish, words, initial, onDone, onCancel }: Shap
   );
 }
 
-function MeasureField({
-  measure,
+/** A base is called by how it is given. */
+const labelOf = (field: ShapeField, draft: ShapeDraft): string =>
+  field.key === 'baseMm'
+    ? draft.values.baseBy === 'edge'
+      ? 'side of the base'
+      : 'radius of the base'
+    : field.label;
+
+function ShapeFieldInput({
+  field,
+  value,
   unit,
-  baseBy,
-  text,
+  label,
   onChange,
   error,
 }: {
-  measure: Measure;
+  field: ShapeField;
+  value: string | boolean;
   unit: LengthUnit;
-  baseBy: ShapeDraft['baseBy'];
-  text: string;
-  onChange: (text: string) => void;
+  label: string;
+  onChange: (value: string | boolean) => void;
   error: string | undefined;
 }) {
-  const isLength = measure.sort === 'length';
+  if (field.sort === 'yes') {
+    return (
+      <div className="col-span-full">
+        <CheckField
+          checked={value === true}
+          onChange={(event) => onChange(event.target.checked)}
+          error={error}
+        >
+          {label}
+        </CheckField>
+      </div>
+    );
+  }
+  const text = String(value);
+  if (field.sort === 'choice') {
+    return (
+      <SelectField
+        className="col-span-full sm:col-span-2"
+        label={label}
+        value={text}
+        onChange={(event) => onChange(event.target.value)}
+        error={error}
+      >
+        {field.options.map((option) => (
+          <option key={option.value} value={option.value}>
+            {option.label}
+          </option>
+        ))}
+      </SelectField>
+    );
+  }
+  const isLength = field.sort === 'length';
   const mm = isLength ? parseLength(text, unit) : null;
   // Typed in another unit, or as a fraction: say what it was read as.
   const readAs = mm !== null && /[^\d\s.,]/.test(text) ? `read as ${formatLength(mm, unit)}` : undefined;
-  const label =
-    measure.key === 'baseMm'
-      ? baseBy === 'edge'
-        ? 'side of the base'
-        : 'radius of the base'
-      : measure.label;
   return (
     <Field
       label={label}
-      unit={isLength && readAs === undefined ? (unit === 'mm' ? 'mm' : 'in') : undefined}
-      inputMode={isLength ? 'text' : 'numeric'}
+      unit={isLength && readAs === undefined ? UNIT_WORDS[unit] : field.sort === 'angle' ? '°' : undefined}
+      inputMode={field.sort === 'count' ? 'numeric' : 'text'}
       autoComplete="off"
       value={text}
       onChange={(event) => onChange(event.target.value)}
@@ -174,3 +172,5 @@ function MeasureField({
     />
   );
 }
+
+const UNIT_WORDS: Readonly<Record<LengthUnit, string>> = { mm: 'mm', inch: 'in' };

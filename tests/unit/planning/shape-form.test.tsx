@@ -109,7 +109,7 @@ describe('a frame from a file', () => {
     const sent = fakeServer();
     show(<ObjForm unit="mm" wish={WISH} words="Add" onDone={vi.fn()} onCancel={vi.fn()} />);
     await user.upload(
-      screen.getByLabelText('Wavefront OBJ file'),
+      screen.getByLabelText('OBJ or CSV file'),
       new File([BROKEN], 'tent.obj', { type: 'text/plain' }),
     );
     const items = await screen.findAllByRole('listitem');
