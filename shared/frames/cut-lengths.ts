@@ -4,10 +4,10 @@ import { anglesAtJoints } from './joint-angles';
 import type { JointAngles, StrutPair } from './joint-angles';
 
 /** Below this a joint is hard to glue and its struts are set back far, degrees. */
-export const SHARP_DEGREES = 30;
+const SHARP_DEGREES = 30;
 
 /** A strut that loses more than this share of its length to its two set-backs is named. */
-export const LARGE_SET_BACK = 0.1;
+const LARGE_SET_BACK = 0.1;
 
 /** Struts closer than this to one direction lie on each other or run straight on, degrees. */
 const SAME_DIRECTION_DEGREES = 0.5;

@@ -28,7 +28,7 @@ export { woodFigures } from './wood-figures';
 export type { WoodFigures } from './wood-figures';
 export { anglesAtJoints } from './joint-angles';
 export type { JointAngles, StrutPair } from './joint-angles';
-export { cutLengths, LARGE_SET_BACK, setBack, SHARP_DEGREES } from './cut-lengths';
+export { cutLengths, setBack } from './cut-lengths';
 export type { CutLength, CutLengths, CutWarning, CutWarningCode } from './cut-lengths';
 export { separateShapes } from './separate-shapes';
 export { CSV_MOST_BYTES, formatFrameCsv, parseFrameCsv } from './frame-csv';

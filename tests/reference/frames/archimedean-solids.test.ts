@@ -69,6 +69,19 @@ describe('buildShape', () => {
       expect(figures.dihedrals.map(({ degrees }) => Number(degrees.toFixed(4)))).toEqual(dihedrals);
     });
 
+    it(`${solid} > its faces > anticlockwise seen from outside`, () => {
+      const height = frame.joints.reduce((sum, { z }) => sum + z, 0) / v;
+      for (const face of frame.faces) {
+        const [a, b, c] = face.map((joint) => frame.joints[joint]!);
+        const [p, q] = [b!, c!].map((at) => ({ x: at.x - a!.x, y: at.y - a!.y, z: at.z - a!.z }));
+        const outward =
+          (p!.y * q!.z - p!.z * q!.y) * a!.x +
+          (p!.z * q!.x - p!.x * q!.z) * a!.y +
+          (p!.x * q!.y - p!.y * q!.x) * (a!.z - height);
+        expect(outward).toBeGreaterThan(0);
+      }
+    });
+
     it(`${solid} > where it stands > on a face of the most sides at z = 0, a side of it in front, every joint as far from the middle`, () => {
       const most = Math.max(...frame.faces.map((face) => face.length));
       const floor = frame.joints.filter(({ z }) => z === 0);
@@ -79,7 +92,7 @@ describe('buildShape', () => {
         expect.closeTo(front, 6),
         expect.closeTo(front, 6),
       ]);
-      const mid = figures.joints ? frame.joints.reduce((sum, { z }) => sum + z, 0) / v : 0;
+      const mid = frame.joints.reduce((sum, { z }) => sum + z, 0) / v;
       const reach = frame.joints.map(({ x, y, z }) => Math.hypot(x, y, z - mid));
       expect(Math.max(...reach) - Math.min(...reach)).toBeLessThan(1e-6);
     });
