@@ -24,7 +24,7 @@ const doneBy = (step: Step, by: string, at: number, flags: string[]): Step => ({
 
 /**
  * A finish made off the network by somebody whose place was given up or handed over before it was heard of.
- * @param world the step; the person held a place on it once
+ * @param world the step; the person held a place on it once and is not who finished it
  * @param happenedAt ms UTC
  * @returns never a refusal. Where nobody holds the step it goes to its check, flagged; where others do they keep it, and the
  *   flag sends what they finish to a check; finished already it stays as it is

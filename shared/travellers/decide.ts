@@ -206,7 +206,8 @@ function start(world: World): Decision {
 function finish(world: World, happenedAt: number | undefined): Decision {
   const { step, person, now } = world;
   if (!holds(step, person.id)) {
-    return happenedAt !== undefined && step.doers.includes(person.id)
+    const heldOnce = step.doers.includes(person.id) && step.finishedBy !== person.id;
+    return happenedAt !== undefined && heldOnce
       ? lateFinish(world, happenedAt)
       : no('STEP_NOT_YOURS', { state: step.state });
   }
