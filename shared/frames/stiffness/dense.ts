@@ -5,6 +5,7 @@ export type Dense = { rows: number; cols: number; data: Float64Array };
 const STALE = 1e-8;
 const MOST_PASSES = 3;
 
+/** A matrix of zeros. */
 export const zeros = (rows: number, cols: number): Dense => ({
   rows,
   cols,

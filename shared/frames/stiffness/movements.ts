@@ -5,21 +5,10 @@ import type { Elimination } from './elimination';
 
 /** Steps of inverse iteration; it doubles its digits in one or two unless two holds are nearly alike, and then either is the answer. */
 const MOST_STEPS = 12;
+const CLOSE_ENOUGH = 1e-3;
 
 const length = (vector: Float64Array): number =>
   Math.sqrt(vector.reduce((sum, value) => sum + value * value, 0));
-
-/**
- * A movement of which the fastest joint moves 1.
- * @param movement three numbers per joint
- * @returns a new one in the same direction; a movement of nothing stays nothing
- */
-export function fastestOne(movement: Float64Array): Float64Array {
-  let most = 0;
-  for (let at = 0; at < movement.length; at += 3)
-    most = Math.max(most, Math.hypot(movement[at]!, movement[at + 1]!, movement[at + 2]!));
-  return most > 0 ? movement.map((value) => value / most) : movement.slice();
-}
 
 /**
  * Movements that stretch nothing, those as a whole among them.
@@ -74,26 +63,40 @@ export function leastHoldOf(elimination: Elimination, free: readonly Float64Arra
   const { size, rank } = elimination;
   if (rank === 0) return Infinity;
   const random = seededRandom(7);
-  let x: Float64Array = Float64Array.from({ length: size }, () => 2 * random() - 1);
-  let hold = Infinity;
-  for (let step = 0; step < MOST_STEPS; step++) {
+  const heldPart = (x: Float64Array): number => {
     for (const one of free ?? []) {
       let share = 0;
       for (let i = 0; i < size; i++) share += x[i]! * one[i]!;
       for (let i = 0; i < size; i++) x[i]! -= share * one[i]!;
     }
     if (!free) for (const { column } of elimination.free) x[column] = 0;
-    const before = length(x);
-    if (!(before > 0)) break;
-    const next = solveSquare(
+    return length(x);
+  };
+  let x: Float64Array = Float64Array.from({ length: size }, () => 2 * random() - 1);
+  let before = heldPart(x);
+  let hold = Infinity;
+  for (let step = 0; step < MOST_STEPS && before > 0; step++) {
+    const start = before;
+    x = solveSquare(
       elimination,
-      x.map((value) => value / before),
+      x.map((value) => value / start),
     );
-    const grown = length(next);
-    const now = 1 / Math.sqrt(grown);
-    x = next;
-    if (Math.abs(now - hold) < 1e-3 * now) return now;
+    before = heldPart(x);
+    const now = 1 / Math.sqrt(before);
+    if (Math.abs(now - hold) < CLOSE_ENOUGH * now) return now;
     hold = now;
   }
   return hold;
+}
+
+/**
+ * A movement of which the fastest joint moves 1.
+ * @param movement three numbers per joint
+ * @returns a new one in the same direction; a movement of nothing stays nothing
+ */
+export function fastestOne(movement: Float64Array): Float64Array {
+  let most = 0;
+  for (let at = 0; at < movement.length; at += 3)
+    most = Math.max(most, Math.hypot(movement[at]!, movement[at + 1]!, movement[at + 2]!));
+  return most > 0 ? movement.map((value) => value / most) : movement.slice();
 }
