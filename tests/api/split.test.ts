@@ -12,6 +12,9 @@ import { defaultTemplateSteps } from '../../shared/travellers/default-template';
 import { rows } from '../support/fixtures-accounts';
 import { logged, openHall, type Hall } from '../support/fixtures-safety';
 
+// The computations run in a thread of their own and take the time that the machine gives them.
+vi.setConfig({ testTimeout: 90_000 });
+
 let hall: Hall;
 let cubeId: string;
 let templateId: string;
@@ -66,7 +69,7 @@ async function run(body: SplitWish): Promise<RunView> {
       if (data.status === 'running') throw new Error('still running');
       return data;
     },
-    { timeout: 15_000, interval: 50 },
+    { timeout: 60_000, interval: 50 },
   );
 }
 const splits = async () =>
