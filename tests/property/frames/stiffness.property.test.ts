@@ -92,7 +92,7 @@ describe('analyseStiffness', () => {
         expect(counted.ok && counted.value.rank).toBe(found.rank);
         expect(stiffnessText(found).join(' ')).not.toMatch(/NaN|undefined/);
       }),
-      { numRuns: 150 },
+      { numRuns: 80 },
     );
   });
 
