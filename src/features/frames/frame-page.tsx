@@ -7,6 +7,7 @@ import { DimensionHead } from '../../components/ui/heads';
 import { counted } from '../../lib/formats';
 import { FrameDownloads } from './frame-downloads';
 import { FramePreview } from './frame-preview';
+import { FrameStiffness } from './frame-stiffness';
 import { FrameTable } from './frame-table';
 import { ObjForm } from './obj-form';
 import { ShapeForm } from './shape-form';
@@ -115,6 +116,7 @@ export function FramePage({ frame, unit, path, mayEdit, onChanged, onRemoved }: 
             <FrameDownloads frame={frame.geometry} name={frame.name} />
           </div>
           <FramePreview frame={frame.geometry} unit={unit} name={frame.name} />
+          <FrameStiffness frame={frame.geometry} unit={unit} />
         </>
       )}
     </section>
