@@ -3,7 +3,8 @@ import { DEFAULT_AGE_RULES, type Hazard, type StopScope } from '../../../shared/
 import { decide, type Command, type PersonFacts, type Step, type World } from '../../../shared/travellers';
 import { NOW, personOf, stepOf } from '../../unit/travellers/fixtures';
 
-export const LIMIT = 2;
+/** One step at a time: with one open step on each of two pieces a higher limit would never be met. */
+export const LIMIT = 1;
 
 /** Who is in the hall: two who may do everything, one unbriefed, one of fifteen, one whom the desk has not confirmed. */
 export const PEOPLE: Readonly<Record<string, PersonFacts>> = {
@@ -119,7 +120,7 @@ export interface Move {
   /** What is asked: something that is allowed now, something that drives the work on, or anything. */
   kind: 'allowed' | 'on' | 'any';
   pick: number;
-  /** Whether it may be something that stops the work or tells of it late. */
+  /** Whether it is something that stops the work or tells of it late. */
   seldom: boolean;
   later: number;
   stop: number;
@@ -178,7 +179,7 @@ function turnOf(from: Hall, move: Move): Turn {
   const step = stepFor(before, move);
   const who = whoFor(step, move);
   const world = worldOf(before, step.id, who);
-  const all = commandsFor(before, step, move).filter((command) => move.seldom || !isSeldom(command));
+  const all = commandsFor(before, step, move).filter((command) => move.seldom === isSeldom(command));
   const allowed = move.kind === 'any' ? [] : all.filter((command) => decide(world, command).ok);
   const among =
     allowed.length === 0 ? all : move.kind === 'on' ? allowed.slice(0, move.pick % 5 === 0 ? 2 : 1) : allowed;
